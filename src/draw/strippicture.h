@@ -1,0 +1,16 @@
+/* SPDX-License-Identifier: MIT */
+#pragma once
+#include "draw/palette.h"
+#include "review/review.h"
+
+/* The run strip: the run unrolled along its distance.  Lanes from the top: free
+ * width on the left (upward), the body, free width on the right (downward),
+ * front range with its threshold dashed, states with a diamond for each turn. */
+
+typedef struct KhStripData KhStripData; /* free widths and lanes worked out once a run, at any thread */
+KhStripData *kh_strip_data_new (const KhPlan *plan, const KhTrace *trace);
+void kh_strip_data_free (KhStripData *data);
+
+typedef struct { KhScheme scheme; double width, height, text_size; gsize played_tick; } KhStripPicture;
+void kh_strip_picture_draw (const KhStripPicture *picture, cairo_t *cr, const KhStripData *data);
+gsize kh_strip_picture_tick_at (const KhStripPicture *picture, const KhStripData *data, double x); /* under the pointer */
