@@ -1,0 +1,9 @@
+/* SPDX-License-Identifier: MIT */
+#pragma once
+/* cmocka needs these four before it. */
+#include <setjmp.h>
+#include <stdarg.h>
+#include <stddef.h>
+#include <stdint.h>
+
+#include <cmocka.h>
