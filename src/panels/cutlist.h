@@ -46,6 +46,13 @@ G_DEFINE_AUTOPTR_CLEANUP_FUNC (KhCutList, kh_cut_list_free)
 /* The panel as it stands, seen from above, nanometres: x0, y0, x1, y1. */
 void kh_panel_get_box_nm (const KhPanel *panel, const KhPlan *plan, int64_t box[4]);
 
-/* What must be sawn from what: rows of the list, boards and saw of the plan. Owned. */
+/* What must be sawn from what: rows of the list, boards and saw of the plan.
+ * Stock i of the order is board i of the plan, so that a pattern's stock names a
+ * board; a board that cannot be used (another thickness, too narrow) stands there
+ * with count 0.  Behind them, for each sheet whose grain may run either way, its
+ * strips along the other edge.  Owned. */
 KhSawOrder *kh_cut_list_dup_order (const KhCutList *list, const KhPlan *plan);
+
+/* A sentence for each board that cannot be used, and why.  Owned, of char *; may be empty. */
+GPtrArray *kh_cut_list_dup_board_notes (const KhPlan *plan);
 const char *kh_point_kind_get_name (KhPointKind kind);  /* "corner": for files */

@@ -17,6 +17,8 @@ typedef struct
   int64_t price_milli;  /* KH_PRICE_NONE: no price */
   int count;            /* bought pieces at most; KH_COUNT_ANY */
   int n_strips;         /* strips of the needed width in one bought piece; bought whole */
+  int pool;             /* 0: 'count' is its own; else stock of the same pool is bought out of one
+                         * count, the same in each (a sheet that may be ripped either way) */
 } KhSawStock;
 
 typedef struct { int64_t length_nm; int count; } KhSawPiece;
