@@ -176,20 +176,38 @@ static void count (Count *c, int k)
     }
 }
 
-gboolean kh_saw_bound_update (KhSawBound *bound, int *bought)
+/* What everything together costs that could be bought. */
+static int64_t count_most (const KhSawProblem *problem)
+{
+  KhInt128 most = 0;
+  for (int k = 0; k < problem->n_kinds; k++)
+    most += (KhInt128)problem->kinds[k].price * problem->kinds[k].limit;
+  return (int64_t)MIN (most, (KhInt128)G_MAXINT64 / 4);
+}
+
+/* The least cost from 'low' to under 'high'; looks in windows that grow, so that
+ * the first find is near the bound and the tree stays small. */
+KhSawBoundResult kh_saw_bound_update (KhSawBound *bound, int64_t below, int *bought)
 {
   gsize n = (gsize)bound->problem->n_kinds;
   g_autofree int *trial = g_new0 (int, n + 1);
   Count c = { bound, trial, bought, 0, G_MAXINT64, COUNT_NODES };
   KhInt128 parts = bound_rest (&c, 0);
-  if (parts < G_MAXINT64)
-    bound->bound = MAX (bound->bound, (int64_t)parts);
-  count (&c, 0);
-  if (c.n_nodes < 0)
-    return FALSE;
-  bound->impossible = c.best == G_MAXINT64;
-  if (bound->impossible)
-    return FALSE;
-  bound->bound = MAX (bound->bound, c.best);
-  return TRUE;
+  if (parts >= G_MAXINT64)
+    return KH_SAW_BOUND_IMPOSSIBLE;
+  bound->bound = MAX (bound->bound, (int64_t)parts);
+  int64_t most = count_most (bound->problem), window = bound->problem->price_step;
+  while (bound->bound < below && bound->bound <= most)
+    {
+      int64_t high = MIN (below, bound->bound + window);
+      c.best = high;
+      count (&c, 0);
+      if (c.n_nodes < 0)
+        return KH_SAW_BOUND_UNKNOWN;
+      bound->bound = c.best;
+      if (c.best < high)
+        return KH_SAW_BOUND_RAISED;
+      window = MIN (window * 2, most + 1);
+    }
+  return bound->bound >= below ? KH_SAW_BOUND_CLOSED : KH_SAW_BOUND_IMPOSSIBLE;
 }

@@ -23,7 +23,6 @@ typedef struct
   GPtrArray *cuts;     /* of int64_t *: held by a bought piece of each kind, then V */
   GPtrArray *no_goods; /* of int *: a kind each */
   int64_t bound;       /* so far, 0 at first */
-  gboolean impossible; /* the limits leave nothing: no plan exists */
 } KhSawBound;
 
 KhSawBound *kh_saw_bound_new (const KhSawProblem *problem);
@@ -35,6 +34,14 @@ gboolean kh_saw_bound_add_cut (KhSawBound *bound, const int64_t *value);
 void kh_saw_bound_add_no_good (KhSawBound *bound, const int *bought);
 gboolean kh_saw_bound_allows (const KhSawBound *bound, const int *bought);
 
-/* Raises 'bound' and gives what would be bought for it (a kind each).  FALSE when
- * it ran out of steps (bought is of no use) or found it impossible. */
-gboolean kh_saw_bound_update (KhSawBound *bound, int *bought);
+typedef enum
+{
+  KH_SAW_BOUND_RAISED,     /* 'bought' costs 'bound', and nothing that is allowed costs less */
+  KH_SAW_BOUND_CLOSED,     /* nothing that is allowed costs less than 'below' */
+  KH_SAW_BOUND_IMPOSSIBLE, /* nothing is allowed at all */
+  KH_SAW_BOUND_UNKNOWN     /* out of steps; 'bound' holds as far as it got */
+} KhSawBoundResult;
+
+/* Raises 'bound' and gives what would be bought for it (a kind each).  Looks only
+ * for costs under 'below' (G_MAXINT64: any). */
+KhSawBoundResult kh_saw_bound_update (KhSawBound *bound, int64_t below, int *bought);

@@ -134,7 +134,7 @@ KhSawDraft *kh_saw_fill (const KhSawProblem *problem, const KhSawFill *fill)
   gboolean more = FALSE;
   for (gsize i = 0; i < n; i++)
     {
-      left[i] = fill->demands ? fill->demands[i] : problem->items[i].demand;
+      left[i] = problem->items[i].demand;
       more |= left[i] > 0;
       int64_t width = problem->items[i].width;
       value[i] = width;

@@ -17,7 +17,6 @@ typedef struct
   KhSawFillHow how;
   int only_kind;       /* -1: all */
   const int *limits;   /* a kind each: bought pieces at most; NULL: the problem's */
-  const int *demands;  /* an item each; NULL: the problem's */
 } KhSawFill;
 
 /* NULL where the limits leave pieces over. */

@@ -2,6 +2,24 @@
 #include "panels/saw_search.h"
 #include "panels/saw_bound.h"
 #include "panels/saw_fill.h"
+#include "panels/saw_fit.h"
+#include "panels/saw_lp.h"
+
+#define VARIANTS 9
+#define FIT_STRIPS 300 /* so many at most are searched through */
+#define FIT_NODES 20000
+#define OPEN_MOST 40 /* purchases that come to nothing either way before it ends */
+
+typedef struct
+{
+  const KhSawProblem *problem;
+  KhSawClock *clock;
+  KhSawBound *bound;
+  GPtrArray *pool; /* of KhSawWay: all ways met */
+  KhSawDraft *best;
+  double *prices, *capacities; /* of a strip, a kind each; the largest is 1 */
+  gboolean is_claimed;         /* the bound's no-goods are all proven */
+} Search;
 
 static void keep_cheaper (KhSawDraft **best, KhSawDraft *draft)
 {
@@ -15,27 +33,163 @@ static void keep_cheaper (KhSawDraft **best, KhSawDraft *draft)
 }
 
 /* The cheapest of all fillings, of all stock together and of each alone. */
-static KhSawDraft *fill_all (const KhSawProblem *problem)
+static KhSawDraft *fill_all (const KhSawProblem *problem, const int *limits)
 {
   KhSawDraft *best = NULL;
   for (int only = problem->n_kinds > 1 ? -1 : 0; only < problem->n_kinds; only++)
     for (int how = 0; how < KH_SAW_N_FILLS; how++)
       {
-        KhSawFill fill = { (KhSawFillHow)how, only, NULL, NULL };
+        KhSawFill fill = { (KhSawFillHow)how, only, limits };
         keep_cheaper (&best, kh_saw_fill (problem, &fill));
       }
   return best;
 }
 
+static int *dup_strips (const KhSawProblem *problem, const int *bought)
+{
+  int *strips = g_new (int, problem->n_kinds);
+  int n_pieces = kh_saw_problem_n_pieces (problem);
+  for (int k = 0; k < problem->n_kinds; k++)
+    {
+      int n = bought ? bought[k] : problem->kinds[k].limit;
+      strips[k] = (int)MIN ((int64_t)n * problem->kinds[k].n_strips, n_pieces);
+    }
+  return strips;
+}
+
+/* Cuts out of what the linear programme says the pieces are worth; TRUE when the strips could hold them in parts. */
+static gboolean cut_by_programme (Search *s, const int *strips, const double *costs)
+{
+  g_autofree int *demands = g_new (int, s->problem->n_items);
+  for (int i = 0; i < s->problem->n_items; i++)
+    demands[i] = s->problem->items[i].demand;
+  KhSawLpTask task = { demands, strips, costs, s->clock };
+  g_autoptr (KhSawLp) lp = kh_saw_lp_new (s->problem, &task, s->pool);
+  kh_saw_bound_add_cut (s->bound, lp->values);
+  return !(lp->missing > 0);
+}
+
+static void keep_tidy (Search *s, KhSawDraft *draft, const int *limits)
+{
+  if (!draft)
+    return;
+  kh_saw_fill_tidy (s->problem, limits, draft);
+  keep_cheaper (&s->best, draft);
+}
+
+/* Tries to cut everything out of what is bought.  NONE is proven. */
+static KhSawFitResult try_bought (Search *s, const int *bought)
+{
+  int64_t cost = 0;
+  int n_strips = 0;
+  g_autofree int *strips = dup_strips (s->problem, bought);
+  for (int k = 0; k < s->problem->n_kinds; k++)
+    {
+      cost += bought[k] * s->problem->kinds[k].price;
+      n_strips += strips[k];
+    }
+  keep_cheaper (&s->best, fill_all (s->problem, bought));
+  if (s->best && s->best->cost <= cost)
+    return KH_SAW_FIT_FOUND;
+  gboolean in_parts = cut_by_programme (s, strips, s->capacities);
+  if (!kh_saw_bound_allows (s->bound, bought))
+    return KH_SAW_FIT_NONE;
+  for (int variant = 0; in_parts && variant < VARIANTS && !kh_saw_clock_is_over (s->clock); variant++)
+    {
+      KhSawDive dive = { strips, s->capacities, variant, s->clock };
+      keep_tidy (s, kh_saw_dive (s->problem, &dive, s->pool), bought);
+      if (s->best && s->best->cost <= cost)
+        return KH_SAW_FIT_FOUND;
+    }
+  if (n_strips > FIT_STRIPS)
+    return KH_SAW_FIT_UNKNOWN;
+  g_autofree int *demands = g_new (int, s->problem->n_items);
+  for (int i = 0; i < s->problem->n_items; i++)
+    demands[i] = s->problem->items[i].demand;
+  g_autoptr (KhSawDraft) draft = kh_saw_draft_new ();
+  KhSawFitTask fit = { demands, strips, FIT_NODES, s->clock };
+  KhSawFitResult result = kh_saw_fit (s->problem, &fit, draft->ways);
+  if (result == KH_SAW_FIT_FOUND)
+    keep_tidy (s, g_steal_pointer (&draft), bought);
+  return result;
+}
+
+/* One purchase after the other, from the bound up.  Returns FALSE when it is
+ * certain that no purchase within the limits will do. */
+static gboolean climb (Search *s, gboolean any_will_do, int64_t *bound)
+{
+  g_autofree int *bought = g_new0 (int, s->problem->n_kinds);
+  for (int open = 0; open < OPEN_MOST && !kh_saw_clock_is_over (s->clock);)
+    {
+      if (s->best && any_will_do)
+        return TRUE;
+      KhSawBoundResult result = kh_saw_bound_update (s->bound, s->best ? s->best->cost : G_MAXINT64, bought);
+      if (s->is_claimed && result != KH_SAW_BOUND_IMPOSSIBLE)
+        *bound = s->bound->bound;
+      if (result == KH_SAW_BOUND_IMPOSSIBLE)
+        return s->best || !s->is_claimed;
+      if (result != KH_SAW_BOUND_RAISED)
+        return TRUE;
+      KhSawFitResult fit = try_bought (s, bought);
+      if (fit == KH_SAW_FIT_FOUND || !kh_saw_bound_allows (s->bound, bought))
+        continue;
+      if (fit == KH_SAW_FIT_UNKNOWN)
+        {
+          s->is_claimed = FALSE;
+          open++;
+        }
+      kh_saw_bound_add_no_good (s->bound, bought);
+    }
+  return TRUE;
+}
+
+/* The best plan, or with 'any_will_do' the first; NULL where there is none, or none was found. */
+static KhSawDraft *search_problem (const KhSawProblem *problem, KhSawClock *clock, gboolean any_will_do, int64_t *bound)
+{
+  *bound = 0;
+  g_autoptr (KhSawBound) cuts = kh_saw_bound_new (problem);
+  g_autoptr (GPtrArray) pool = g_ptr_array_new_with_free_func (g_free);
+  g_autofree double *prices = g_new0 (double, problem->n_kinds + 1),
+                    *capacities = g_new0 (double, problem->n_kinds + 1);
+  g_autofree int64_t *value = g_new0 (int64_t, problem->n_items + 1);
+  Search s = { problem, clock, cuts, pool, fill_all (problem, NULL), prices, capacities, TRUE };
+  double most_price = 0, most_capacity = 0;
+  for (int k = 0; k < problem->n_kinds; k++)
+    {
+      prices[k] = (double)problem->kinds[k].price / problem->kinds[k].n_strips;
+      capacities[k] = (double)problem->kinds[k].capacity;
+      most_price = MAX (most_price, prices[k]);
+      most_capacity = MAX (most_capacity, capacities[k]);
+    }
+  for (int k = 0; k < problem->n_kinds; k++)
+    {
+      prices[k] /= most_price > 0 ? most_price : 1;
+      capacities[k] /= most_capacity;
+    }
+  for (int i = 0; i < problem->n_items; i++)
+    value[i] = problem->items[i].width;
+  kh_saw_bound_add_cut (cuts, value);
+  g_autofree int *bought = g_new0 (int, problem->n_kinds + 1);
+  KhSawBoundResult first = kh_saw_bound_update (cuts, s.best ? s.best->cost : G_MAXINT64, bought);
+  *bound = first == KH_SAW_BOUND_IMPOSSIBLE ? 0 : cuts->bound;
+  if (first == KH_SAW_BOUND_CLOSED || (s.best && any_will_do))
+    return s.best;
+  g_autofree int *strips = dup_strips (problem, NULL);
+  cut_by_programme (&s, strips, prices);
+  climb (&s, any_will_do, bound);
+  return s.best;
+}
+
 /* The fewest pieces that must be left out, longest first, so that the rest can be met. */
-static int count_short (const KhSawProblem *problem)
+static int count_short (const KhSawProblem *problem, KhSawClock *clock)
 {
   int low = 0, high = kh_saw_problem_n_pieces (problem);
   while (high - low > 1)
     {
       int middle = low + (high - low) / 2;
+      int64_t bound;
       g_autoptr (KhSawProblem) rest = kh_saw_problem_new_without (problem, middle);
-      g_autoptr (KhSawDraft) draft = fill_all (rest);
+      g_autoptr (KhSawDraft) draft = search_problem (rest, clock, TRUE, &bound);
       if (draft)
         high = middle;
       else
@@ -46,20 +200,14 @@ static int count_short (const KhSawProblem *problem)
 
 void kh_saw_search (const KhSawProblem *problem, double seconds, KhJob *job, KhSawOutcome *outcome)
 {
-  outcome->draft = problem->n_items > 0 ? fill_all (problem) : kh_saw_draft_new ();
-  if (!outcome->draft)
+  KhSawClock clock = { g_get_monotonic_time () + (gint64)(CLAMP (seconds, 0, 1e6) * 1e6), job, FALSE };
+  if (problem->n_items == 0)
     {
-      outcome->n_short = count_short (problem);
+      outcome->draft = kh_saw_draft_new ();
       return;
     }
-  if (problem->n_items == 0)
-    return;
-  g_autoptr (KhSawBound) bound = kh_saw_bound_new (problem);
-  g_autofree int64_t *value = g_new (int64_t, problem->n_items);
-  g_autofree int *bought = g_new (int, problem->n_kinds);
-  for (int i = 0; i < problem->n_items; i++)
-    value[i] = problem->items[i].width;
-  kh_saw_bound_add_cut (bound, value);
-  kh_saw_bound_update (bound, bought);
-  outcome->bound = bound->bound;
+  outcome->draft = search_problem (problem, &clock, FALSE, &outcome->bound);
+  if (!outcome->draft)
+    outcome->n_short = count_short (problem, &clock);
+  outcome->ended_by_limit = !outcome->draft || outcome->bound < outcome->draft->cost;
 }
