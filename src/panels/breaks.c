@@ -46,13 +46,13 @@ int64_t kh_breaks_piece_length_nm (const KhBreaks *breaks, const KhBreakPiece *p
   return (piece->to - piece->from) * breaks->pitch_nm + (piece->ends[0] + piece->ends[1]) * breaks->half_nm;
 }
 
-static gboolean loses (const KhBreaks *breaks, int line, int place)
+gboolean kh_breaks_is_lost (const KhBreaks *breaks, int line, int place)
 {
   int meeting = breaks->lines[line].meetings[place];
   if (meeting < 0)
     return FALSE;
   const KhBreakMeeting *m = &g_array_index (breaks->meetings, KhBreakMeeting, meeting);
-  return m->line[m->loser] == line;
+  return m->loser == KH_BREAK_BOTH || (m->loser < 2 && m->line[m->loser] == line);
 }
 
 int kh_breaks_get_end (const KhBreaks *breaks, int line, int place)
@@ -62,11 +62,11 @@ int kh_breaks_get_end (const KhBreaks *breaks, int line, int place)
     case KH_BREAK_FREE:
       return breaks->free_end;
     case KH_BREAK_CORNER:
-      return loses (breaks, line, place) ? -1 : 1;
+      return kh_breaks_is_lost (breaks, line, place) ? -1 : 1;
     case KH_BREAK_STEM:
       return -1;
     case KH_BREAK_CROSS:
-      return loses (breaks, line, place) ? -1 : 0;
+      return kh_breaks_is_lost (breaks, line, place) ? -1 : 0;
     default:
       return 0;
     }
@@ -91,22 +91,43 @@ int64_t kh_breaks_count_stretch (const KhBreaks *breaks, int n, const int ends[2
   return between < 1 ? TOO_LONG : 2 + (rest + between - 1) / between;
 }
 
-int64_t kh_breaks_count_pieces (const KhBreaks *breaks, int index)
+/* A joint that nothing can take away: the line's ends, forced ones, lost crosses. */
+static gboolean is_joint (const KhBreaks *breaks, int index, int place)
 {
   const KhBreakLine *line = &breaks->lines[index];
-  int n = line->run.to - line->run.from, from = 0;
-  int end = kh_breaks_get_end (breaks, index, 0);
+  return place == 0 || place == line->run.to - line->run.from || line->forced[place]
+         || (line->spots[place] == KH_BREAK_CROSS && kh_breaks_is_lost (breaks, index, place));
+}
+
+static int64_t count_between (const KhBreaks *breaks, int line, int from, int to)
+{
   int64_t sum = 0;
-  for (int place = 1; place <= n; place++)
+  int end = kh_breaks_get_end (breaks, line, from);
+  for (int place = from + 1; place <= to; place++)
     {
-      if (place < n && !line->forced[place] && !(line->spots[place] == KH_BREAK_CROSS && loses (breaks, index, place)))
+      if (!is_joint (breaks, line, place))
         continue;
-      int next = kh_breaks_get_end (breaks, index, place);
+      int next = kh_breaks_get_end (breaks, line, place);
       sum += kh_breaks_count_stretch (breaks, place - from, (int[2]){ end, next });
       from = place;
       end = next;
     }
   return sum;
+}
+
+int64_t kh_breaks_count_pieces (const KhBreaks *breaks, int line)
+{
+  return count_between (breaks, line, 0, breaks->lines[line].run.to - breaks->lines[line].run.from);
+}
+
+int64_t kh_breaks_count_around (const KhBreaks *breaks, int line, int place)
+{
+  int n = breaks->lines[line].run.to - breaks->lines[line].run.from, from = MAX (place - 1, 0), to = MIN (place + 1, n);
+  while (!is_joint (breaks, line, from))
+    from--;
+  while (!is_joint (breaks, line, to))
+    to++;
+  return count_between (breaks, line, from, to);
 }
 
 /* What the flipping of chains counts: how often each length occurs. */

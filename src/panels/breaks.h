@@ -32,6 +32,8 @@ typedef struct
 } KhBreakLine;
 
 /* A corner or a cross: one line loses (does not own, or is broken there). */
+#define KH_BREAK_BOTH 2    /* while choosing: both lose */
+#define KH_BREAK_NEITHER 3 /* while choosing: none does */
 typedef struct
 {
   gboolean is_cross;
@@ -64,6 +66,11 @@ int64_t kh_breaks_piece_length_nm (const KhBreaks *breaks, const KhBreakPiece *p
 /* Fewest pieces of a line with the losers as they are, and a large sum for
  * each stretch that cannot be made short enough. */
 int64_t kh_breaks_count_pieces (const KhBreaks *breaks, int line);
+
+/* The same between the joints on both sides of a place where two lines meet:
+ * what changes when the loser there does. */
+int64_t kh_breaks_count_around (const KhBreaks *breaks, int line, int place);
+gboolean kh_breaks_is_lost (const KhBreaks *breaks, int line, int place);
 
 /* The same for a stretch of n walls between two joints with nothing but splices
  * within: more than n where it cannot be. */

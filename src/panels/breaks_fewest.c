@@ -17,19 +17,12 @@
 #define NODES_MOST 20000
 #define GROUP_MOST 400 /* meetings; larger groups take the first descent */
 
-typedef enum
-{
-  OPEN,
-  DECIDED
-} State;
-
 typedef struct
 {
   KhBreaks *breaks;
-  guint8 *state;  /* a meeting each */
-  int64_t *score; /* a line each, its open meetings taken as lost */
-  GArray *group;  /* of int: meetings */
-  int64_t sum, best, least;
+  GArray *group;       /* of int: meetings, all lost by both at first */
+  int64_t sum;         /* of the scores of all lines */
+  int64_t best, least; /* sums: found, and not to be beaten */
   guint8 *best_losers; /* a meeting of the group each */
   int n_nodes;
 } Search;
@@ -87,67 +80,55 @@ static void set_wishes (KhBreaks *breaks)
       if (meeting_at (breaks, meeting)->chain < 0)
         trace_chain (breaks, i, meeting);
     }
-  for (guint i = 0; i < breaks->meetings->len; i++)
-    meeting_at (breaks, (int)i)->loser = meeting_at (breaks, (int)i)->wished;
 }
 
-/* Score with the losers as they are but for the open meetings: 'open_lost' says how those stand. */
-static int64_t get_score (Search *search, int line, gboolean open_lost)
+static int get_place (const KhBreaks *breaks, const KhBreakMeeting *m, int side)
 {
-  KhBreaks *breaks = search->breaks;
-  const KhBreakLine *l = &breaks->lines[line];
-  int n = n_walls (breaks, line), lost = 0;
-  g_autofree guint8 *kept = g_new (guint8, n + 1);
-  for (int place = 0; place <= n; place++)
-    if (l->meetings[place] >= 0)
-      {
-        KhBreakMeeting *m = meeting_at (breaks, l->meetings[place]);
-        int side = m->line[0] == line ? 0 : 1;
-        kept[place] = (guint8)m->loser;
-        if (search->state[l->meetings[place]] == OPEN)
-          m->loser = open_lost ? side : 1 - side;
-        lost += m->is_cross && m->loser == side;
-      }
-  int64_t score = kh_breaks_count_pieces (breaks, line) - lost;
-  for (int place = 0; place <= n; place++)
-    if (l->meetings[place] >= 0)
-      meeting_at (breaks, l->meetings[place])->loser = kept[place];
+  return breaks->lines[m->line[1 - side]].run.line - breaks->lines[m->line[side]].run.from;
+}
+
+static int64_t get_score (const KhBreaks *breaks, int line)
+{
+  int64_t score = kh_breaks_count_pieces (breaks, line);
+  for (int place = 0; place <= n_walls (breaks, line); place++)
+    score -= breaks->lines[line].spots[place] == KH_BREAK_CROSS && kh_breaks_is_lost (breaks, line, place);
   return score;
 }
 
-/* Decides meeting 'i' for 'loser': the other side's score may rise. */
-static void decide (Search *search, int i, int loser)
+/* The part of both lines' scores that hangs on this meeting. */
+static int64_t get_share (const KhBreaks *breaks, const KhBreakMeeting *m)
 {
-  KhBreakMeeting *m = meeting_at (search->breaks, i);
-  int winner = m->line[1 - loser];
-  m->loser = loser;
-  search->state[i] = DECIDED;
-  search->sum -= search->score[winner];
-  search->score[winner] = get_score (search, winner, TRUE);
-  search->sum += search->score[winner];
+  int64_t share = 0;
+  for (int side = 0; side < 2; side++)
+    {
+      int place = get_place (breaks, m, side);
+      share += kh_breaks_count_around (breaks, m->line[side], place);
+      share -= m->is_cross && kh_breaks_is_lost (breaks, m->line[side], place);
+    }
+  return share;
 }
 
-static void undo (Search *search, int i, int winner, int64_t score)
+/* Gives meeting 'i' to 'loser' and returns by how much the sum has risen. */
+static int64_t decide (Search *search, int i, int loser)
 {
-  search->state[i] = OPEN;
-  search->sum += score - search->score[winner];
-  search->score[winner] = score;
+  KhBreakMeeting *m = meeting_at (search->breaks, i);
+  int64_t before = get_share (search->breaks, m);
+  m->loser = loser;
+  int64_t rise = get_share (search->breaks, m) - before;
+  search->sum += rise;
+  return rise;
 }
 
 /* Which side loses with the lower sum; the wish where both are alike. */
 static int better_loser (Search *search, int i)
 {
-  const KhBreakMeeting *m = meeting_at (search->breaks, i);
   int64_t rise[2];
   for (int loser = 0; loser < 2; loser++)
     {
-      int winner = m->line[1 - loser];
-      int64_t before = search->score[winner];
-      decide (search, i, loser);
-      rise[loser] = search->score[winner] - before;
-      undo (search, i, winner, before);
+      rise[loser] = decide (search, i, loser);
+      decide (search, i, KH_BREAK_BOTH);
     }
-  return rise[0] == rise[1] ? m->wished : rise[0] < rise[1] ? 0 : 1;
+  return rise[0] == rise[1] ? meeting_at (search->breaks, i)->wished : rise[0] < rise[1] ? 0 : 1;
 }
 
 static void keep_best (Search *search)
@@ -171,12 +152,27 @@ static void descend (Search *search, guint depth)
   int i = g_array_index (search->group, int, depth), first = better_loser (search, i);
   for (int k = 0; k < 2; k++)
     {
-      int loser = k == 0 ? first : 1 - first, winner = meeting_at (search->breaks, i)->line[1 - loser];
-      int64_t before = search->score[winner];
-      decide (search, i, loser);
+      decide (search, i, k == 0 ? first : 1 - first);
       descend (search, depth + 1);
-      undo (search, i, winner, before);
+      decide (search, i, KH_BREAK_BOTH);
     }
+}
+
+/* Every second meeting of each line, as on a chessboard: for full grids. */
+static gboolean try_chessboard (Search *search)
+{
+  KhBreaks *breaks = search->breaks;
+  for (guint k = 0; k < search->group->len; k++)
+    {
+      const KhBreakMeeting *m = meeting_at (breaks, g_array_index (search->group, int, k));
+      int parity = (breaks->lines[m->line[0]].run.line + breaks->lines[m->line[1]].run.line) % 2;
+      decide (search, g_array_index (search->group, int, k), parity);
+    }
+  if (search->sum == search->least)
+    return TRUE;
+  for (guint k = 0; k < search->group->len; k++)
+    decide (search, g_array_index (search->group, int, k), KH_BREAK_BOTH);
+  return FALSE;
 }
 
 static void search_group (Search *search)
@@ -189,6 +185,8 @@ static void search_group (Search *search)
   search->n_nodes = 0;
   if (n <= GROUP_MOST)
     descend (search, 0);
+  else if (try_chessboard (search))
+    return;
   for (guint k = 0; k < n; k++)
     {
       int i = g_array_index (search->group, int, k);
@@ -210,7 +208,7 @@ static void gather_group (Search *search, int first, guint8 *seen)
         for (int place = 0; place <= n_walls (breaks, m->line[side]); place++)
           {
             int next = breaks->lines[m->line[side]].meetings[place];
-            if (next < 0 || seen[next] || search->state[next] != OPEN)
+            if (next < 0 || seen[next] || meeting_at (breaks, next)->loser != KH_BREAK_BOTH)
               continue;
             seen[next] = 1;
             g_array_append_val (search->group, next);
@@ -244,37 +242,41 @@ static void return_to_wishes (Search *search)
   g_array_sort_with_data (others, compare_outer, breaks);
   for (guint k = 0; k < others->len; k++)
     {
-      KhBreakMeeting *m = meeting_at (breaks, g_array_index (others, int, k));
-      int64_t before = get_score (search, m->line[0], TRUE) + get_score (search, m->line[1], TRUE);
-      m->loser = m->wished;
-      if (get_score (search, m->line[0], TRUE) + get_score (search, m->line[1], TRUE) > before)
-        m->loser = 1 - m->wished;
+      int i = g_array_index (others, int, k), wished = meeting_at (breaks, i)->wished;
+      if (decide (search, i, wished) > 0)
+        decide (search, i, 1 - wished);
     }
+}
+
+static void set_all (KhBreaks *breaks, int loser, int64_t *scores)
+{
+  for (guint i = 0; i < breaks->meetings->len; i++)
+    meeting_at (breaks, (int)i)->loser = loser;
+  for (int i = 0; i < breaks->n_lines; i++)
+    scores[i] = get_score (breaks, i);
 }
 
 void kh_breaks_choose_losers (KhBreaks *breaks)
 {
   set_wishes (breaks);
-  guint n = breaks->meetings->len;
-  g_autofree guint8 *state = g_new0 (guint8, n), *seen = g_new0 (guint8, n), *cares = g_new0 (guint8, breaks->n_lines);
-  g_autofree int64_t *score = g_new0 (int64_t, breaks->n_lines);
+  int n = (int)breaks->meetings->len;
+  g_autofree guint8 *seen = g_new0 (guint8, n + 1);
+  g_autofree int64_t *worst = g_new0 (int64_t, breaks->n_lines + 1), *score = g_new0 (int64_t, breaks->n_lines + 1);
   g_autoptr (GArray) group = g_array_new (FALSE, FALSE, sizeof (int));
-  Search search = { .breaks = breaks, .state = state, .score = score, .group = group };
+  Search search = { .breaks = breaks, .group = group };
+  set_all (breaks, KH_BREAK_NEITHER, worst);
+  set_all (breaks, KH_BREAK_BOTH, score);
   for (int i = 0; i < breaks->n_lines; i++)
-    {
-      score[i] = get_score (&search, i, TRUE);
-      cares[i] = score[i] != get_score (&search, i, FALSE);
-      search.sum += score[i];
-    }
-  for (int i = 0; i < (int)n; i++)
+    search.sum += score[i];
+  for (int i = 0; i < n; i++)
     {
       const KhBreakMeeting *m = meeting_at (breaks, i);
-      gboolean x = cares[m->line[0]], y = cares[m->line[1]];
+      gboolean x = score[m->line[0]] != worst[m->line[0]], y = score[m->line[1]] != worst[m->line[1]];
       if (!x || !y)
         decide (&search, i, x == y ? m->wished : x ? 0 : 1);
     }
-  for (int i = 0; i < (int)n; i++)
-    if (state[i] == OPEN && !seen[i])
+  for (int i = 0; i < n; i++)
+    if (meeting_at (breaks, i)->loser == KH_BREAK_BOTH && !seen[i])
       {
         gather_group (&search, i, seen);
         search_group (&search);

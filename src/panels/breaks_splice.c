@@ -3,13 +3,14 @@
 
 /* Where a stretch of a line is spliced: for its fewest pieces, first the fewest
  * faults (splices where nothing meets, stubs under two thirds of an even
- * share), then the least sum of the squared numbers of walls.  Dynamic
+ * share), then the least sum of the squared numbers of walls, then shorter ones at
+ * the ends, so that the odd ones in between are whole pitches.  Dynamic
  * programming over pieces and places; a piece's last place is known to within
  * the slack of the whole, which keeps it small. */
 
 typedef struct
 {
-  int64_t faults, squares;
+  int64_t faults, squares, outer;
   int before; /* where the last piece begins; -1: cannot be */
 } Cell;
 
@@ -41,19 +42,23 @@ static gboolean is_held (const Stretch *s, int place)
 
 static gboolean is_better (const Cell *a, const Cell *b)
 {
-  return b->before < 0 || a->faults < b->faults || (a->faults == b->faults && a->squares < b->squares);
+  if (b->before < 0 || a->faults != b->faults)
+    return b->before < 0 || a->faults < b->faults;
+  return a->squares != b->squares ? a->squares < b->squares : a->outer < b->outer;
 }
 
 /* The best last piece that ends at 'to' as number 'k' (0-based). */
 static Cell find_piece (const Stretch *s, const Cell *row, int k, int to)
 {
-  Cell best = { 0, 0, -1 };
+  Cell best = { .before = -1 };
   for (int from = to - 1; from >= k && fits (s, from, to); from--)
     {
       if (k == 0 ? from > 0 : row[from].before < 0)
         continue;
       int64_t walls = to - from;
-      Cell cell = { k == 0 ? 0 : row[from].faults, k == 0 ? 0 : row[from].squares, from };
+      Cell cell = k == 0 ? (Cell){ 0 } : row[from];
+      cell.before = from;
+      cell.outer += k == 0 || to == s->n ? walls : 0;
       cell.squares += walls * walls;
       cell.faults += walls * s->n_pieces * 3 < (int64_t)s->n * 2;
       cell.faults += to < s->n && !is_held (s, to);

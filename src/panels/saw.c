@@ -241,7 +241,6 @@ KhSawPlan *kh_saw_plan_new (const KhSawOrder *order, const KhSawSettings *settin
   write_down (plan, order, problem, draft);
   plan->bound_milli = MIN (outcome.bound, plan->cost_milli);
   plan->proven = plan->bound_milli == plan->cost_milli;
-  plan->ended_by_limit &= !plan->proven;
   g_autoptr (GError) error = NULL;
   if (!kh_saw_check (order, plan, &error))
     g_error ("the saw plan does not pass its check: %s", error->message);

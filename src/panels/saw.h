@@ -60,7 +60,7 @@ typedef struct
   /* Cost and its proven least, in thousandths.  Where no stock has a price a bought piece costs 1 (1000). */
   int64_t cost_milli, bound_milli;
   gboolean proven;      /* cost = bound: no plan costs less */
-  gboolean ended_by_limit;
+  gboolean ended_by_limit; /* of time or steps: not proven; with cannot_cut: fewer might have to be left out */
   int64_t used_nm;      /* sum of the lengths cut */
   GArray *offcuts_nm;   /* of int64_t: left pieces worth keeping, longest first */
   GArray *cannot_cut;   /* of KhCannotCut; not empty: patterns is empty */

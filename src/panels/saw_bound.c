@@ -5,7 +5,7 @@
 #include <string.h>
 
 #define KNAPSACK_NODES 200000
-#define COUNT_NODES 200000
+#define COUNT_NODES 5000000
 
 KhSawBound *kh_saw_bound_new (const KhSawProblem *problem)
 {

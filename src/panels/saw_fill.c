@@ -144,6 +144,8 @@ KhSawDraft *kh_saw_fill (const KhSawProblem *problem, const KhSawFill *fill)
   g_autoptr (KhSawDraft) draft = kh_saw_draft_new ();
   while (more)
     {
+      if (fill->how != KH_SAW_FILL_LONGEST && kh_saw_clock_is_over (fill->clock))
+        return NULL;
       KhSawWay *way = choose_way (&f);
       if (!way)
         return NULL;

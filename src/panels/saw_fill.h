@@ -1,5 +1,6 @@
 /* SPDX-License-Identifier: MIT */
 #pragma once
+#include "panels/saw_clock.h"
 #include "panels/saw_problem.h"
 
 /* Inside the saw plan: a first plan, made strip by strip.
@@ -17,9 +18,10 @@ typedef struct
   KhSawFillHow how;
   int only_kind;       /* -1: all */
   const int *limits;   /* a kind each: bought pieces at most; NULL: the problem's */
+  KhSawClock *clock;   /* LONGEST is quick and goes on without looking at it */
 } KhSawFill;
 
-/* NULL where the limits leave pieces over. */
+/* NULL where the limits leave pieces over or the time is. */
 KhSawDraft *kh_saw_fill (const KhSawProblem *problem, const KhSawFill *fill);
 
 /* Puts what strips hold into cheaper stock where that fits, and buys no strip

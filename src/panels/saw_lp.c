@@ -19,7 +19,7 @@ typedef struct
   KhSawLp *lp;
   GHashTable *known; /* of KhSawWay: no way twice */
   int n_items, n_rows;
-  int *item_of, *row_of;
+  int *item_of;
   double *inverse, *right, *amount, *price, *column, *step;
   int *basis;
 } Simplex;
@@ -134,7 +134,7 @@ static gboolean refresh (Simplex *s)
   memset (s->inverse, 0, sizeof (double) * (gsize)n * (gsize)n);
   for (int row = 0; row < n; row++)
     s->inverse[(gsize)row * (gsize)n + (gsize)row] = 1;
-  for (int k = 0; k < n; k++)
+  for (int k = 0; k < n && !kh_saw_clock_is_over (s->task->clock); k++)
     {
       get_column (s, members[k], s->column);
       multiply (s, s->column, s->step);
@@ -149,7 +149,7 @@ static gboolean refresh (Simplex *s)
       s->basis[best] = members[k];
     }
   multiply (s, s->right, s->amount);
-  return TRUE;
+  return !s->task->clock->is_over;
 }
 
 static void set_prices (Simplex *s)
@@ -173,13 +173,19 @@ static double get_gain (const Simplex *s, const KhSawWay *way)
   return gain;
 }
 
+/* What is not a number comes out as 0: the cut made of it is weak, not false. */
+static int64_t scale_price (double price)
+{
+  return price > 0 ? (int64_t)((price < MISSING_COST ? price : MISSING_COST) * VALUE_SCALE) : 0;
+}
+
 /* A way not known yet that gains; FALSE where no kind has one. */
 static gboolean find_way (Simplex *s, int *member)
 {
   gsize n = (gsize)s->problem->n_items;
   g_autofree int64_t *value = g_new0 (int64_t, n);
   for (int row = 0; row < s->n_items; row++)
-    value[s->item_of[row]] = (int64_t)(MAX (s->price[row], 0) * VALUE_SCALE);
+    value[s->item_of[row]] = scale_price (s->price[row]);
   double most = EPSILON * 100;
   gboolean found = FALSE;
   for (int kind = 0; kind < s->problem->n_kinds; kind++)
@@ -285,14 +291,17 @@ static gboolean run (Simplex *s)
   return FALSE;
 }
 
-static void set_up (Simplex *s)
+static void number_rows (Simplex *s)
 {
-  int n = s->problem->n_items;
-  s->item_of = g_new (int, n + 1);
-  for (int i = 0; i < n; i++)
+  s->item_of = g_new (int, s->problem->n_items + 1);
+  for (int i = 0; i < s->problem->n_items; i++)
     if (s->task->demands[i] > 0)
       s->item_of[s->n_items++] = i;
   s->n_rows = s->n_items + s->problem->n_kinds;
+}
+
+static void set_up (Simplex *s)
+{
   gsize rows = (gsize)s->n_rows;
   s->inverse = g_new0 (double, rows *rows);
   s->right = g_new0 (double, rows * 5);
@@ -325,7 +334,7 @@ static void read_result (Simplex *s)
     }
   set_prices (s);
   for (int row = 0; row < s->n_items; row++)
-    lp->values[s->item_of[row]] = (int64_t)(CLAMP (s->price[row], 0, MISSING_COST) * VALUE_SCALE);
+    lp->values[s->item_of[row]] = scale_price (s->price[row]);
 }
 
 static void free_list (gpointer list) { g_slist_free (list); }
@@ -338,6 +347,12 @@ KhSawLp *kh_saw_lp_new (const KhSawProblem *problem, const KhSawLpTask *task, GP
   lp->values = g_new0 (int64_t, problem->n_items + 1);
   g_autoptr (GHashTable) known = g_hash_table_new_full (NULL, NULL, NULL, free_list);
   Simplex s = { .problem = problem, .task = task, .lp = lp, .known = known };
+  number_rows (&s);
+  if (s.n_rows > KH_SAW_LP_ROWS)
+    {
+      g_free (s.item_of);
+      return lp;
+    }
   set_up (&s);
   take_pool (&s, pool);
   guint n_taken = lp->ways->len;

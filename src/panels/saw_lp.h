@@ -30,6 +30,9 @@ typedef struct
   gboolean is_ended; /* FALSE: out of steps or time; amounts and values are what stood then */
 } KhSawLp;
 
+#define KH_SAW_LP_ROWS 1000 /* items with demand and kinds together; with more it
+                               * gives no way and no value, not ended */
+
 /* Adds to 'pool' (of KhSawWay, borrowed) what it finds; ways of the pool are
  * taken in, cut down to the demands. */
 KhSawLp *kh_saw_lp_new (const KhSawProblem *problem, const KhSawLpTask *task, GPtrArray *pool);

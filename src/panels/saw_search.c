@@ -33,13 +33,13 @@ static void keep_cheaper (KhSawDraft **best, KhSawDraft *draft)
 }
 
 /* The cheapest of all fillings, of all stock together and of each alone. */
-static KhSawDraft *fill_all (const KhSawProblem *problem, const int *limits)
+static KhSawDraft *fill_all (const KhSawProblem *problem, const int *limits, KhSawClock *clock)
 {
   KhSawDraft *best = NULL;
   for (int only = problem->n_kinds > 1 ? -1 : 0; only < problem->n_kinds; only++)
     for (int how = 0; how < KH_SAW_N_FILLS; how++)
       {
-        KhSawFill fill = { (KhSawFillHow)how, only, limits };
+        KhSawFill fill = { (KhSawFillHow)how, only, limits, clock };
         keep_cheaper (&best, kh_saw_fill (problem, &fill));
       }
   return best;
@@ -88,7 +88,7 @@ static KhSawFitResult try_bought (Search *s, const int *bought)
       cost += bought[k] * s->problem->kinds[k].price;
       n_strips += strips[k];
     }
-  keep_cheaper (&s->best, fill_all (s->problem, bought));
+  keep_cheaper (&s->best, fill_all (s->problem, bought, s->clock));
   if (s->best && s->best->cost <= cost)
     return KH_SAW_FIT_FOUND;
   gboolean in_parts = cut_by_programme (s, strips, s->capacities);
@@ -114,22 +114,20 @@ static KhSawFitResult try_bought (Search *s, const int *bought)
   return result;
 }
 
-/* One purchase after the other, from the bound up.  Returns FALSE when it is
- * certain that no purchase within the limits will do. */
-static gboolean climb (Search *s, gboolean any_will_do, int64_t *bound)
+/* One purchase after the other, from the bound up. */
+static void climb (Search *s, gboolean any_will_do, int64_t *bound)
 {
   g_autofree int *bought = g_new0 (int, s->problem->n_kinds);
   for (int open = 0; open < OPEN_MOST && !kh_saw_clock_is_over (s->clock);)
     {
       if (s->best && any_will_do)
-        return TRUE;
+        return;
       KhSawBoundResult result = kh_saw_bound_update (s->bound, s->best ? s->best->cost : G_MAXINT64, bought);
       if (s->is_claimed && result != KH_SAW_BOUND_IMPOSSIBLE)
         *bound = s->bound->bound;
-      if (result == KH_SAW_BOUND_IMPOSSIBLE)
-        return s->best || !s->is_claimed;
+      s->is_impossible = result == KH_SAW_BOUND_IMPOSSIBLE && s->is_claimed && !s->best;
       if (result != KH_SAW_BOUND_RAISED)
-        return TRUE;
+        return;
       KhSawFitResult fit = try_bought (s, bought);
       if (fit == KH_SAW_FIT_FOUND || !kh_saw_bound_allows (s->bound, bought))
         continue;
@@ -140,19 +138,18 @@ static gboolean climb (Search *s, gboolean any_will_do, int64_t *bound)
         }
       kh_saw_bound_add_no_good (s->bound, bought);
     }
-  return TRUE;
 }
 
-/* The best plan, or with 'any_will_do' the first; NULL where there is none, or none was found. */
-static KhSawDraft *search_problem (const KhSawProblem *problem, KhSawClock *clock, gboolean any_will_do, int64_t *bound)
+/* The best plan, or with 'any_will_do' the first.  No plan where none was found;
+ * it then ended by a limit unless it is proven that there is none. */
+static void search_problem (const KhSawProblem *problem, KhSawClock *clock, gboolean any_will_do, KhSawOutcome *outcome)
 {
-  *bound = 0;
   g_autoptr (KhSawBound) cuts = kh_saw_bound_new (problem);
   g_autoptr (GPtrArray) pool = g_ptr_array_new_with_free_func (g_free);
   g_autofree double *prices = g_new0 (double, problem->n_kinds + 1),
                     *capacities = g_new0 (double, problem->n_kinds + 1);
   g_autofree int64_t *value = g_new0 (int64_t, problem->n_items + 1);
-  Search s = { problem, clock, cuts, pool, fill_all (problem, NULL), prices, capacities, TRUE };
+  Search s = { problem, clock, cuts, pool, fill_all (problem, NULL, clock), prices, capacities, TRUE, FALSE };
   double most_price = 0, most_capacity = 0;
   for (int k = 0; k < problem->n_kinds; k++)
     {
@@ -171,43 +168,51 @@ static KhSawDraft *search_problem (const KhSawProblem *problem, KhSawClock *cloc
   kh_saw_bound_add_cut (cuts, value);
   g_autofree int *bought = g_new0 (int, problem->n_kinds + 1);
   KhSawBoundResult first = kh_saw_bound_update (cuts, s.best ? s.best->cost : G_MAXINT64, bought);
-  *bound = first == KH_SAW_BOUND_IMPOSSIBLE ? 0 : cuts->bound;
-  if (first == KH_SAW_BOUND_CLOSED || (s.best && any_will_do))
-    return s.best;
-  g_autofree int *strips = dup_strips (problem, NULL);
-  cut_by_programme (&s, strips, prices);
-  climb (&s, any_will_do, bound);
-  return s.best;
+  s.is_impossible = first == KH_SAW_BOUND_IMPOSSIBLE;
+  outcome->bound = cuts->bound;
+  if (first == KH_SAW_BOUND_RAISED || first == KH_SAW_BOUND_UNKNOWN)
+    if (!s.best || !any_will_do)
+      {
+        g_autofree int *strips = dup_strips (problem, NULL);
+        cut_by_programme (&s, strips, prices);
+        climb (&s, any_will_do, &outcome->bound);
+      }
+  outcome->draft = s.best;
+  outcome->ended_by_limit = s.best ? outcome->bound < s.best->cost : !s.is_impossible;
 }
 
 /* The fewest pieces that must be left out, longest first, so that the rest can be met. */
-static int count_short (const KhSawProblem *problem, KhSawClock *clock)
+static void count_short (const KhSawProblem *problem, KhSawClock *clock, KhSawOutcome *outcome)
 {
   int low = 0, high = kh_saw_problem_n_pieces (problem);
   while (high - low > 1)
     {
       int middle = low + (high - low) / 2;
-      int64_t bound;
+      KhSawOutcome trial = { 0 };
       g_autoptr (KhSawProblem) rest = kh_saw_problem_new_without (problem, middle);
-      g_autoptr (KhSawDraft) draft = search_problem (rest, clock, TRUE, &bound);
-      if (draft)
+      search_problem (rest, clock, TRUE, &trial);
+      if (trial.draft)
         high = middle;
       else
-        low = middle;
+        {
+          low = middle;
+          outcome->ended_by_limit = trial.ended_by_limit;
+        }
+      kh_saw_draft_free (trial.draft);
     }
-  return high;
+  outcome->n_short = high;
 }
 
 void kh_saw_search (const KhSawProblem *problem, double seconds, KhJob *job, KhSawOutcome *outcome)
 {
   KhSawClock clock = { g_get_monotonic_time () + (gint64)(CLAMP (seconds, 0, 1e6) * 1e6), job, FALSE };
+  *outcome = (KhSawOutcome){ 0 };
   if (problem->n_items == 0)
     {
       outcome->draft = kh_saw_draft_new ();
       return;
     }
-  outcome->draft = search_problem (problem, &clock, FALSE, &outcome->bound);
+  search_problem (problem, &clock, FALSE, outcome);
   if (!outcome->draft)
-    outcome->n_short = count_short (problem, &clock);
-  outcome->ended_by_limit = !outcome->draft || outcome->bound < outcome->draft->cost;
+    count_short (problem, &clock, outcome);
 }
