@@ -19,6 +19,7 @@ typedef struct
   KhSawDraft *best;
   double *prices, *capacities; /* of a strip, a kind each; the largest is 1 */
   gboolean is_claimed;         /* the bound's no-goods are all proven */
+  gboolean is_impossible;      /* proven: the stock there is will not do */
 } Search;
 
 static void keep_cheaper (KhSawDraft **best, KhSawDraft *draft)
