@@ -13,6 +13,7 @@ static const KhCommand commands[] = {
   { "follow", N_ ("PLAN"), N_ ("one run of the follower through a plan"), kh_command_follow },
   { "cutlist", N_ ("PLAN"), N_ ("panels, posts and what to buy"), kh_command_cutlist },
   { "saw", N_ ("ORDER"), N_ ("the saw plan of a bare order"), kh_command_saw },
+  { "draw", N_ ("PLAN"), N_ ("a picture of a plan: SVG, PDF or PNG"), kh_command_draw },
   { "example", N_ ("[NAME]"), N_ ("writes a drawn example plan"), kh_command_example },
   { NULL },
 };

@@ -103,7 +103,7 @@ static const KhField control_rows[] = {
   ROW (KhRobotControl, jump_mm, "jump_mm", KH_FIELD_DOUBLE_OPEN, 0, 5000),
   ROW (KhRobotControl, n_lost_samples, "lost_samples", KH_FIELD_INT, 1, 20),
   ROW (KhRobotControl, n_blocked_samples, "blocked_samples", KH_FIELD_INT, 1, 20),
-  ROW (KhRobotControl, trim, "trim", KH_FIELD_BOOLEAN),
+  ROW (KhRobotControl, trim, "trim", KH_FIELD_BOOLEAN, .least = 0),
   ROW (KhRobotControl, lost_by, "lost_by", KH_FIELD_CHOICE, .choices = lost_by_choices),
   PLACE (KhRobotControl, lead_in_add_mm, "lead_in_add_mm"),
   END,
