@@ -76,6 +76,14 @@ KhSawOrder *kh_cut_list_dup_order (const KhCutList *list, const KhPlan *plan)
   return order;
 }
 
+static gboolean some_have_a_price (const KhPlan *plan)
+{
+  for (guint i = 0; i < plan->build.stock->len; i++)
+    if (g_array_index (plan->build.stock, KhStock, i).price_milli != KH_PRICE_NONE)
+      return TRUE;
+  return FALSE;
+}
+
 static char *dup_note (const KhPlan *plan, guint i)
 {
   const KhStock *board = &g_array_index (plan->build.stock, KhStock, i);
@@ -95,6 +103,9 @@ static char *dup_note (const KhPlan *plan, guint i)
       return g_strdup_printf (_ ("Sheet %s is not used: no strip of %s comes out of its width once it is trimmed."),
                               name, height);
     }
+  if (board->price_milli == KH_PRICE_NONE && some_have_a_price (plan))
+    /* TRANSLATORS: name of a board */
+    return g_strdup_printf (_ ("Board %s has no price where others have one: it is counted as costing nothing."), name);
   return NULL;
 }
 

@@ -53,6 +53,7 @@ void kh_panel_get_box_nm (const KhPanel *panel, const KhPlan *plan, int64_t box[
  * strips along the other edge.  Owned. */
 KhSawOrder *kh_cut_list_dup_order (const KhCutList *list, const KhPlan *plan);
 
-/* A sentence for each board that cannot be used, and why.  Owned, of char *; may be empty. */
+/* A sentence for each board that cannot be used, and why, or whose price is
+ * missing where others have one.  Owned, of char *; may be empty. */
 GPtrArray *kh_cut_list_dup_board_notes (const KhPlan *plan);
 const char *kh_point_kind_get_name (KhPointKind kind);  /* "corner": for files */
