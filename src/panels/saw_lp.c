@@ -323,7 +323,6 @@ static void read_result (Simplex *s)
 {
   KhSawLp *lp = s->lp;
   g_array_set_size (lp->amounts, lp->ways->len);
-  memset (lp->amounts->data, 0, sizeof (double) * lp->ways->len);
   for (int row = 0; row < s->n_rows; row++)
     {
       int member = s->basis[row];
