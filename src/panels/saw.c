@@ -4,6 +4,7 @@
 #include "panels/saw_problem.h"
 #include "panels/saw_search.h"
 #include <glib/gi18n-lib.h>
+#include <inttypes.h>
 
 G_DEFINE_QUARK (kh - saw - error - quark, kh_saw_error)
 
@@ -51,8 +52,7 @@ static gboolean refuse_number (GError **error, const char *path, int64_t stands,
 {
   g_set_error (error, KH_SAW_ERROR, KH_SAW_ERROR_ORDER,
                /* TRANSLATORS: path of a member, what stands there, the least and the most it may be */
-               _ ("%s is %" G_GINT64_FORMAT "; it must be %" G_GINT64_FORMAT " to %" G_GINT64_FORMAT), path, stands,
-               least, most);
+               _ ("%s is %" PRId64 "; it must be %" PRId64 " to %" PRId64), path, stands, least, most);
   return FALSE;
 }
 

@@ -1,11 +1,11 @@
 /* SPDX-License-Identifier: MIT */
 #include "base/units.h"
 #include "panels/saw.h"
-#include <glib/gi18n-lib.h>
 
 /* The judge.  Everything is worked out anew from the order and the plan, with
  * nothing taken over from the search: what fits, what is cut how often, what is
- * bought, what it costs, what is left. */
+ * bought, what it costs, what is left.  What it says is for whoever mends the
+ * program, so it is not translated. */
 
 #define REFUSE(...) (g_set_error (error, KH_SAW_ERROR, KH_SAW_ERROR_CHECK, __VA_ARGS__), FALSE)
 
@@ -13,27 +13,27 @@ static gboolean judge_pattern (const KhSawOrder *order, const KhSawPlan *plan, g
 {
   const KhPattern *pattern = &g_array_index (plan->patterns, KhPattern, index);
   if (pattern->stock < 0 || pattern->stock >= (int)order->stock->len)
-    return REFUSE (_ ("pattern %u names stock %d, which the order does not have"), index, pattern->stock);
+    return REFUSE ("pattern %u names stock %d, which the order does not have", index, pattern->stock);
   if (pattern->count < 1 || pattern->cuts->len == 0)
-    return REFUSE (_ ("pattern %u is cut no time, or has no piece"), index);
+    return REFUSE ("pattern %u is cut no time, or has no piece", index);
   KhInt128 sum = 0;
   int64_t n = 0;
   for (guint i = 0; i < pattern->cuts->len; i++)
     {
       const KhSawCut *cut = &g_array_index (pattern->cuts, KhSawCut, i);
       if (cut->count < 1 || cut->length_nm < 1)
-        return REFUSE (_ ("pattern %u has a cut without a count or a length"), index);
+        return REFUSE ("pattern %u has a cut without a count or a length", index);
       if (i > 0 && cut->length_nm >= g_array_index (pattern->cuts, KhSawCut, i - 1).length_nm)
-        return REFUSE (_ ("pattern %u does not have its cuts longest first"), index);
+        return REFUSE ("pattern %u does not have its cuts longest first", index);
       sum += (KhInt128)cut->length_nm * cut->count;
       n += cut->count;
     }
   KhInt128 left = (KhInt128)g_array_index (order->stock, KhSawStock, pattern->stock).length_nm - 2 * order->end_trim_nm
                   - sum - (KhInt128)(n - 1) * order->kerf_nm;
   if (left < 0)
-    return REFUSE (_ ("pattern %u does not fit its stock: %" G_GINT64_FORMAT " nm too much"), index, (int64_t)-left);
+    return REFUSE ("pattern %u does not fit its stock: %" G_GINT64_FORMAT " nm too much", index, (int64_t)-left);
   if (left != pattern->left_nm)
-    return REFUSE (_ ("pattern %u says %" G_GINT64_FORMAT " nm are left, but it is %" G_GINT64_FORMAT " nm"), index,
+    return REFUSE ("pattern %u says %" G_GINT64_FORMAT " nm are left, but it is %" G_GINT64_FORMAT " nm", index,
                    pattern->left_nm, (int64_t)left);
   return TRUE;
 }
@@ -74,10 +74,10 @@ static gboolean judge_pieces (const KhSawOrder *order, const KhSawPlan *plan, GE
   g_hash_table_iter_init (&iter, counts);
   while (g_hash_table_iter_next (&iter, &length, &count))
     if (*(int64_t *)count != 0)
-      return REFUSE (_ ("pieces of %" G_GINT64_FORMAT " nm: %" G_GINT64_FORMAT " too few are cut"), *(int64_t *)length,
+      return REFUSE ("pieces of %" G_GINT64_FORMAT " nm: %" G_GINT64_FORMAT " too few are cut", *(int64_t *)length,
                      *(int64_t *)count);
   if (used != plan->used_nm)
-    return REFUSE (_ ("the lengths cut add up to %" G_GINT64_FORMAT " nm, not %" G_GINT64_FORMAT " nm"), used,
+    return REFUSE ("the lengths cut add up to %" G_GINT64_FORMAT " nm, not %" G_GINT64_FORMAT " nm", used,
                    plan->used_nm);
   return TRUE;
 }
@@ -95,11 +95,11 @@ static gboolean judge_stock (const KhSawOrder *order, const KhSawPlan *plan, gui
     if (i != s && stock->pool != 0 && g_array_index (order->stock, KhSawStock, i).pool == stock->pool)
       pool += g_array_index (plan->n_bought, int, i);
   if (bought < 0 || bought * stock->n_strips < strips || (bought > 0 && (bought - 1) * stock->n_strips >= strips))
-    return REFUSE (
-        _ ("stock %u gives %d strips a piece; for %" G_GINT64_FORMAT " strips %" G_GINT64_FORMAT " pieces are bought"),
-        s, stock->n_strips, strips, bought);
+    return REFUSE ("stock %u gives %d strips a piece; for %" G_GINT64_FORMAT " strips %" G_GINT64_FORMAT
+                   " pieces are bought",
+                   s, stock->n_strips, strips, bought);
   if (stock->count != KH_COUNT_ANY && (stock->pool != 0 ? pool : bought) > stock->count)
-    return REFUSE (_ ("of stock %u there are only %d"), s, stock->count);
+    return REFUSE ("of stock %u there are only %d", s, stock->count);
   return TRUE;
 }
 
@@ -118,11 +118,11 @@ static gboolean judge_cost (const KhSawOrder *order, const KhSawPlan *plan, GErr
       cost += (KhInt128)bought * (!priced ? 1000 : price == KH_PRICE_NONE ? 0 : price);
     }
   if (n != plan->n_pieces_of_stock || cost != plan->cost_milli)
-    return REFUSE (_ ("what is bought adds up to %" G_GINT64_FORMAT " pieces at %" G_GINT64_FORMAT
-                      " thousandths, not %d at %" G_GINT64_FORMAT),
+    return REFUSE ("what is bought adds up to %" G_GINT64_FORMAT " pieces at %" G_GINT64_FORMAT
+                   " thousandths, not %d at %" G_GINT64_FORMAT,
                    n, (int64_t)cost, plan->n_pieces_of_stock, plan->cost_milli);
   if (plan->bound_milli > plan->cost_milli || plan->proven != (plan->bound_milli == plan->cost_milli))
-    return REFUSE (_ ("the plan's bound of %" G_GINT64_FORMAT " does not go with its cost of %" G_GINT64_FORMAT),
+    return REFUSE ("the plan's bound of %" G_GINT64_FORMAT " does not go with its cost of %" G_GINT64_FORMAT,
                    plan->bound_milli, plan->cost_milli);
   return TRUE;
 }
@@ -152,7 +152,7 @@ static gboolean judge_offcuts (const KhSawOrder *order, const KhSawPlan *plan, G
     {
       int64_t offcut = g_array_index (plan->offcuts_nm, int64_t, i);
       if (i > 0 && offcut > g_array_index (plan->offcuts_nm, int64_t, i - 1))
-        return REFUSE (_ ("the offcuts are not named longest first"));
+        return REFUSE ("the offcuts are not named longest first");
       add_count (counts, &offcut, -1);
     }
   GHashTableIter iter;
@@ -160,8 +160,8 @@ static gboolean judge_offcuts (const KhSawOrder *order, const KhSawPlan *plan, G
   g_hash_table_iter_init (&iter, counts);
   while (g_hash_table_iter_next (&iter, &length, &count))
     if (*(int64_t *)count != 0)
-      return REFUSE (_ ("offcuts of %" G_GINT64_FORMAT " nm: %" G_GINT64_FORMAT " too few are named"),
-                     *(int64_t *)length, *(int64_t *)count);
+      return REFUSE ("offcuts of %" G_GINT64_FORMAT " nm: %" G_GINT64_FORMAT " too few are named", *(int64_t *)length,
+                     *(int64_t *)count);
   return TRUE;
 }
 
@@ -191,16 +191,16 @@ static gboolean judge_cannot (const KhSawOrder *order, const KhSawPlan *plan, GE
                            ? too_long && cannot->count == asked && cannot->over_nm == cannot->length_nm - longest
                            : any && !too_long && cannot->count <= asked;
       if (cannot->count < 1 || !holds)
-        return REFUSE (_ ("what is said to be impossible of pieces of %" G_GINT64_FORMAT " nm does not hold"),
+        return REFUSE ("what is said to be impossible of pieces of %" G_GINT64_FORMAT " nm does not hold",
                        cannot->length_nm);
     }
-  return plan->patterns->len == 0 || REFUSE (_ ("a plan that cannot cut everything has patterns"));
+  return plan->patterns->len == 0 || REFUSE ("a plan that cannot cut everything has patterns");
 }
 
 gboolean kh_saw_check (const KhSawOrder *order, const KhSawPlan *plan, GError **error)
 {
   if (plan->n_bought->len != order->stock->len)
-    return REFUSE (_ ("the plan does not count what is bought of each stock"));
+    return REFUSE ("the plan does not count what is bought of each stock");
   if (plan->cannot_cut->len > 0)
     return judge_cannot (order, plan, error);
   for (guint i = 0; i < plan->patterns->len; i++)
