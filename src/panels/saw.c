@@ -12,6 +12,7 @@ G_DEFINE_QUARK (kh - saw - error - quark, kh_saw_error)
 #define PRICE_MOST_MILLI (G_GINT64_CONSTANT (1000000000) * 1000)
 #define PIECES_MOST 1000000
 #define STRIPS_MOST 10000
+#define ROWS_MOST 4000 /* of pieces: more lengths than any saw list has */
 
 static void stock_clear (gpointer data) { g_free (((KhSawStock *)data)->name); }
 
@@ -110,6 +111,12 @@ gboolean kh_saw_order_check (const KhSawOrder *order, GError **error)
   for (guint i = 0; i < order->stock->len; i++)
     if (!check_stock (order, i, error))
       return FALSE;
+  if (order->pieces->len > ROWS_MOST)
+    {
+      g_set_error (error, KH_SAW_ERROR, KH_SAW_ERROR_ORDER, _ ("pieces has %u entries; it may have %d"),
+                   order->pieces->len, ROWS_MOST);
+      return FALSE;
+    }
   int64_t n = 0;
   for (guint i = 0; i < order->pieces->len; i++)
     {
@@ -239,7 +246,8 @@ KhSawPlan *kh_saw_plan_new (const KhSawOrder *order, const KhSawSettings *settin
   if (plan->cannot_cut->len > 0)
     return plan;
   write_down (plan, order, problem, draft);
-  plan->bound_milli = MIN (outcome.bound, plan->cost_milli);
+  g_assert (outcome.bound <= plan->cost_milli);
+  plan->bound_milli = outcome.bound;
   plan->proven = plan->bound_milli == plan->cost_milli;
   g_autoptr (GError) error = NULL;
   if (!kh_saw_check (order, plan, &error))

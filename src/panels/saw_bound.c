@@ -5,12 +5,14 @@
 #include <string.h>
 
 #define KNAPSACK_NODES 200000
+#define LOOKS_AT_CLOCK 1024 /* nodes between two looks */
 #define COUNT_NODES 5000000
 
-KhSawBound *kh_saw_bound_new (const KhSawProblem *problem)
+KhSawBound *kh_saw_bound_new (const KhSawProblem *problem, KhSawClock *clock)
 {
   KhSawBound *bound = g_new0 (KhSawBound, 1);
   bound->problem = problem;
+  bound->clock = clock;
   bound->cuts = g_ptr_array_new_with_free_func (g_free);
   bound->no_goods = g_ptr_array_new_with_free_func (g_free);
   return bound;
@@ -147,6 +149,8 @@ static int get_limit (const Count *c, int k)
 static void count (Count *c, int k)
 {
   const KhSawProblem *problem = c->bound->problem;
+  if (c->n_nodes % LOOKS_AT_CLOCK == 0 && kh_saw_clock_is_over (c->bound->clock))
+    c->n_nodes = 0;
   if (--c->n_nodes < 0 || c->cost + bound_rest (c, k) >= c->best)
     return;
   if (k == problem->n_kinds)

@@ -1,5 +1,6 @@
 /* SPDX-License-Identifier: MIT */
 #pragma once
+#include "panels/saw_clock.h"
 #include "panels/saw_problem.h"
 
 /* Inside the saw plan: what any plan must cost, in whole numbers.
@@ -22,10 +23,11 @@ typedef struct
   const KhSawProblem *problem;
   GPtrArray *cuts;     /* of int64_t *: held by a bought piece of each kind, then V */
   GPtrArray *no_goods; /* of int *: a kind each */
+  KhSawClock *clock;   /* borrowed */
   int64_t bound;       /* so far, 0 at first */
 } KhSawBound;
 
-KhSawBound *kh_saw_bound_new (const KhSawProblem *problem);
+KhSawBound *kh_saw_bound_new (const KhSawProblem *problem, KhSawClock *clock);
 void kh_saw_bound_free (KhSawBound *bound);
 G_DEFINE_AUTOPTR_CLEANUP_FUNC (KhSawBound, kh_saw_bound_free)
 

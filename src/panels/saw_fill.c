@@ -5,6 +5,7 @@
 #include <string.h>
 
 #define NODES_MOST 5000 /* steps for one filling */
+#define PASSES_MOST 8   /* over all ways, while something is saved */
 
 /* Room for bought pieces: of a kind by itself, and of its pool. */
 static int get_room (const KhSawProblem *problem, const int *limits, const int *bought, int kind)
@@ -156,49 +157,85 @@ KhSawDraft *kh_saw_fill (const KhSawProblem *problem, const KhSawFill *fill)
   return g_steal_pointer (&draft);
 }
 
-/* Moves one strip of 'way' to 'kind' when the whole costs less by it. */
-static gboolean try_move (const KhSawProblem *problem, const int *limits, KhSawDraft *draft, guint index, int kind)
+typedef struct
 {
-  KhSawWay *way = g_ptr_array_index (draft->ways, index);
-  int64_t width = 0;
-  for (int i = 0; i < problem->n_items; i++)
-    width += way->take[i] * problem->items[i].width;
-  if (way->kind == kind || width > problem->kinds[kind].capacity)
+  const KhSawProblem *problem;
+  const int *limits;
+  KhSawDraft *draft;
+  int *strips, *bought; /* a kind each */
+} Tidying;
+
+static int count_bought (const Tidying *t, int kind, int strips)
+{
+  int n = t->problem->kinds[kind].n_strips;
+  return strips / n + (strips % n != 0);
+}
+
+/* What is saved when so many strips go from one kind to another; 0 where there is no room for them. */
+static int64_t get_saving (const Tidying *t, int from, int to, int times)
+{
+  int less = t->bought[from] - count_bought (t, from, t->strips[from] - times);
+  int more = count_bought (t, to, t->strips[to] + times) - t->bought[to];
+  int room = get_room (t->problem, t->limits, t->bought, to);
+  if (t->problem->kinds[from].pool != 0 && t->problem->kinds[from].pool == t->problem->kinds[to].pool)
+    room += less;
+  if (t->limits)
+    room = MIN (room, t->limits[to] - t->bought[to]);
+  room = MIN (room, t->problem->kinds[to].limit - t->bought[to]);
+  return more > room ? 0 : less * t->problem->kinds[from].price - more * t->problem->kinds[to].price;
+}
+
+/* Moves all strips of a way, or else one, to the kind where most is saved. */
+static gboolean try_move (Tidying *t, guint index)
+{
+  KhSawWay *way = g_ptr_array_index (t->draft->ways, index);
+  int64_t width = 0, most = 0;
+  int best = -1, best_times = 0, from = way->kind;
+  for (int i = 0; i < t->problem->n_items; i++)
+    width += way->take[i] * t->problem->items[i].width;
+  for (int kind = 0; kind < t->problem->n_kinds; kind++)
+    for (int times = way->times; times > 0; times = times == way->times && times > 1 ? 1 : 0)
+      {
+        if (kind == from || width > t->problem->kinds[kind].capacity)
+          continue;
+        int64_t saving = get_saving (t, from, kind, times);
+        if (saving <= most)
+          continue;
+        most = saving;
+        best = kind;
+        best_times = times;
+      }
+  if (best < 0)
     return FALSE;
-  g_autofree int *bought = g_new (int, problem->n_kinds);
-  for (int k = 0; k < problem->n_kinds; k++)
-    bought[k] = kh_saw_draft_get_bought (draft, problem, k);
-  int old_kind = way->kind, n = way->times, bought_before = bought[kind];
-  for (int times = n; times > 0; times = times == n && n > 1 ? 1 : 0)
-    {
-      KhSawWay *moved = g_memdup2 (way, sizeof (KhSawWay) + sizeof (int) * (gsize)problem->n_items);
-      moved->kind = kind;
-      moved->times = times;
-      way->times -= times;
-      g_ptr_array_add (draft->ways, moved);
-      int grown = kh_saw_draft_get_bought (draft, problem, kind) - bought_before;
-      bought[old_kind] = kh_saw_draft_get_bought (draft, problem, old_kind);
-      if (grown <= get_room (problem, limits, bought, kind) && kh_saw_draft_get_cost (draft, problem) < draft->cost)
-        {
-          draft->cost = kh_saw_draft_get_cost (draft, problem);
-          if (way->times == 0)
-            g_ptr_array_remove_index (draft->ways, index);
-          return TRUE;
-        }
-      g_ptr_array_remove_index (draft->ways, draft->ways->len - 1);
-      way->times += times;
-    }
-  return FALSE;
+  KhSawWay *moved = g_memdup2 (way, sizeof (KhSawWay) + sizeof (int) * (gsize)t->problem->n_items);
+  moved->kind = best;
+  moved->times = best_times;
+  way->times -= best_times;
+  t->strips[from] -= best_times;
+  t->strips[best] += best_times;
+  t->bought[from] = count_bought (t, from, t->strips[from]);
+  t->bought[best] = count_bought (t, best, t->strips[best]);
+  if (way->times == 0)
+    g_ptr_array_remove_index (t->draft->ways, index);
+  g_ptr_array_add (t->draft->ways, moved);
+  return TRUE;
 }
 
 void kh_saw_fill_tidy (const KhSawProblem *problem, const int *limits, KhSawDraft *draft)
 {
+  g_autofree int *strips = g_new0 (int, problem->n_kinds + 1), *bought = g_new0 (int, problem->n_kinds + 1);
+  Tidying t = { problem, limits, draft, strips, bought };
+  for (int k = 0; k < problem->n_kinds; k++)
+    {
+      strips[k] = kh_saw_draft_get_strips (draft, k);
+      bought[k] = count_bought (&t, k, strips[k]);
+    }
+  gboolean moved = problem->n_kinds > 1;
+  for (int pass = 0; pass < PASSES_MOST && moved; pass++)
+    {
+      moved = FALSE;
+      for (guint i = 0; i < draft->ways->len; i++)
+        moved |= try_move (&t, i);
+    }
   draft->cost = kh_saw_draft_get_cost (draft, problem);
-  for (guint i = 0; i < draft->ways->len && problem->n_kinds > 1; i++)
-    for (int kind = 0; kind < problem->n_kinds; kind++)
-      if (try_move (problem, limits, draft, i, kind))
-        {
-          i = (guint)-1; /* the list has changed: from the start, each time cheaper */
-          break;
-        }
 }

@@ -145,7 +145,7 @@ static void climb (Search *s, gboolean any_will_do, int64_t *bound)
  * it then ended by a limit unless it is proven that there is none. */
 static void search_problem (const KhSawProblem *problem, KhSawClock *clock, gboolean any_will_do, KhSawOutcome *outcome)
 {
-  g_autoptr (KhSawBound) cuts = kh_saw_bound_new (problem);
+  g_autoptr (KhSawBound) cuts = kh_saw_bound_new (problem, clock);
   g_autoptr (GPtrArray) pool = g_ptr_array_new_with_free_func (g_free);
   g_autofree double *prices = g_new0 (double, problem->n_kinds + 1),
                     *capacities = g_new0 (double, problem->n_kinds + 1);
