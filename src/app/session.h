@@ -47,6 +47,11 @@ void kh_session_set_exact (KhSession *self, gboolean exact);
 gboolean kh_session_get_exact (KhSession *self);
 void kh_session_set_played_tick (KhSession *self, gsize tick);
 gsize kh_session_get_played_tick (KhSession *self);
+void kh_session_set_playing (KhSession *self, gboolean playing); /* at the end: from the start again */
+gboolean kh_session_get_playing (KhSession *self);
+void kh_session_set_speed (KhSession *self, double times); /* 1 to 50 times life */
+double kh_session_get_speed (KhSession *self);
+const KhTrace *kh_session_get_trace (KhSession *self);  /* of the hand shown; NULL: no run */
 
 /* Selection */
 void kh_session_set_lit_row (KhSession *self, int row); /* -1: none */

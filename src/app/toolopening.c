@@ -67,7 +67,7 @@ KhEdit *kh_edit_opening (const KhPlan *plan, KhEdge edge, int use_or_minus_1)
     words = g_strdup_printf (_ ("Opening closed at %s"), place);
   else
     /* Translators: "Entrance at A1 west": first the use, then the edge */
-    words = g_strdup_printf (_ ("Opening at %2$s: %1$s"), kh_words_get_opening ((KhOpeningUse)use_or_minus_1), place);
+    words = g_strdup_printf (_ ("Opening at %s: %s"), place, kh_words_get_opening ((KhOpeningUse)use_or_minus_1));
   return kh_edit_new_take (kh_change_new_group_take (group), words);
 }
 

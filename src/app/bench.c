@@ -1,0 +1,159 @@
+/* SPDX-License-Identifier: MIT */
+#include "app/bench.h"
+#include <string.h>
+
+GtkWidget *kh_bench_page_new (GtkWidget **column)
+{
+  GtkWidget *scrolled = gtk_scrolled_window_new ();
+  *column = gtk_box_new (GTK_ORIENTATION_VERTICAL, 6);
+  gtk_widget_set_margin_start (*column, 12);
+  gtk_widget_set_margin_end (*column, 12);
+  gtk_widget_set_margin_top (*column, 6);
+  gtk_widget_set_margin_bottom (*column, 12);
+  gtk_scrolled_window_set_policy (GTK_SCROLLED_WINDOW (scrolled), GTK_POLICY_NEVER, GTK_POLICY_AUTOMATIC);
+  gtk_scrolled_window_set_child (GTK_SCROLLED_WINDOW (scrolled), *column);
+  gtk_widget_set_vexpand (scrolled, TRUE);
+  return scrolled;
+}
+
+static GtkWidget *label_new (const char *text, const char *css)
+{
+  GtkWidget *label = gtk_label_new (text);
+  gtk_label_set_xalign (GTK_LABEL (label), 0);
+  gtk_label_set_wrap (GTK_LABEL (label), TRUE);
+  gtk_label_set_wrap_mode (GTK_LABEL (label), PANGO_WRAP_WORD_CHAR);
+  gtk_widget_add_css_class (label, css);
+  return label;
+}
+
+GtkWidget *kh_bench_heading_new (const char *text)
+{
+  GtkWidget *label = label_new (text, "kh-heading");
+  gtk_widget_set_margin_top (label, 8);
+  return label;
+}
+
+GtkWidget *kh_bench_note_new (const char *text) { return label_new (text, "kh-second"); }
+
+void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped)
+{
+  g_signal_connect_object (session, signal, callback_swapped, widget, G_CONNECT_SWAPPED);
+}
+
+/* ---- entries ---- */
+
+typedef struct
+{
+  KhTryText try_text;
+  KhDupText dup_text;
+  gpointer data;
+  GDestroyNotify free_data;
+  GtkWidget *text, *fault;
+} Entry;
+
+static Entry *entry_of (GtkWidget *widget) { return g_object_get_data (G_OBJECT (widget), "kh-entry"); }
+
+GtkWidget *kh_bench_row_new (const char *label, GtkWidget *widget)
+{
+  GtkWidget *row = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 6);
+  GtkWidget *name = label_new (label, "kh-running");
+  gtk_widget_set_size_request (name, 112, -1);
+  gtk_widget_set_valign (name, GTK_ALIGN_START);
+  gtk_widget_set_margin_top (name, 7);
+  gtk_widget_set_hexpand (widget, TRUE);
+  GtkWidget *named = entry_of (widget) ? entry_of (widget)->text : widget;
+  gtk_label_set_mnemonic_widget (GTK_LABEL (name), named);
+  gtk_accessible_update_property (GTK_ACCESSIBLE (named), GTK_ACCESSIBLE_PROPERTY_LABEL, label, -1);
+  gtk_box_append (GTK_BOX (row), name);
+  gtk_box_append (GTK_BOX (row), widget);
+  return row;
+}
+
+static void entry_free (gpointer data)
+{
+  Entry *entry = data;
+  if (entry->free_data)
+    entry->free_data (entry->data);
+  g_free (entry);
+}
+
+static void show_fault (Entry *entry, const char *fault)
+{
+  gtk_label_set_text (GTK_LABEL (entry->fault), fault ? fault : "");
+  gtk_widget_set_visible (entry->fault, fault != NULL);
+  if (fault)
+    gtk_widget_add_css_class (entry->text, "error");
+  else
+    gtk_widget_remove_css_class (entry->text, "error");
+  gtk_accessible_update_state (GTK_ACCESSIBLE (entry->text), GTK_ACCESSIBLE_STATE_INVALID,
+                               fault ? GTK_ACCESSIBLE_INVALID_TRUE : GTK_ACCESSIBLE_INVALID_FALSE, -1);
+  if (fault)
+    gtk_accessible_update_property (GTK_ACCESSIBLE (entry->text), GTK_ACCESSIBLE_PROPERTY_DESCRIPTION, fault, -1);
+}
+
+static void show_present (Entry *entry)
+{
+  g_autofree char *now = entry->dup_text (entry->data);
+  gtk_editable_set_text (GTK_EDITABLE (entry->text), now);
+  show_fault (entry, NULL);
+}
+
+static void try_cb (Entry *entry)
+{
+  g_autofree char *now = entry->dup_text (entry->data);
+  g_autofree char *text = g_strstrip (g_strdup (gtk_editable_get_text (GTK_EDITABLE (entry->text))));
+  g_autofree char *fault = NULL;
+  if (strcmp (now, text) == 0)
+    show_fault (entry, NULL);
+  else if (entry->try_text (entry->data, text, &fault))
+    show_present (entry);
+  else
+    show_fault (entry, fault);
+}
+
+static gboolean key_cb (GtkEventControllerKey *controller, guint keyval, guint code, GdkModifierType state,
+                        Entry *entry)
+{
+  if (keyval != GDK_KEY_Escape)
+    return FALSE;
+  show_present (entry);
+  return TRUE;
+}
+
+GtkWidget *kh_bench_entry_new (KhTryText try_text, KhDupText dup_text, gpointer data, GDestroyNotify free_data)
+{
+  Entry *entry = g_new0 (Entry, 1);
+  *entry = (Entry){ try_text, dup_text, data, free_data, gtk_entry_new (), label_new ("", "kh-fault") };
+  GtkWidget *box = gtk_box_new (GTK_ORIENTATION_VERTICAL, 2);
+  GtkEventController *focus = gtk_event_controller_focus_new (), *keys = gtk_event_controller_key_new ();
+  gtk_editable_set_width_chars (GTK_EDITABLE (entry->text), 6);
+  gtk_widget_set_visible (entry->fault, FALSE);
+  gtk_box_append (GTK_BOX (box), entry->text);
+  gtk_box_append (GTK_BOX (box), entry->fault);
+  g_object_set_data_full (G_OBJECT (box), "kh-entry", entry, entry_free);
+  g_signal_connect_swapped (entry->text, "activate", G_CALLBACK (try_cb), entry);
+  g_signal_connect_swapped (focus, "leave", G_CALLBACK (try_cb), entry);
+  g_signal_connect (keys, "key-pressed", G_CALLBACK (key_cb), entry);
+  gtk_widget_add_controller (entry->text, focus);
+  gtk_widget_add_controller (entry->text, keys);
+  show_present (entry);
+  return box;
+}
+
+void kh_bench_entry_refresh (GtkWidget *widget)
+{
+  Entry *entry = entry_of (widget);
+  GtkWidget *focus = gtk_widget_get_root (widget) ? gtk_root_get_focus (gtk_widget_get_root (widget)) : NULL;
+  gboolean typing = focus && gtk_widget_is_ancestor (focus, entry->text);
+  if (!typing)
+    show_present (entry);
+}
+
+void kh_bench_refresh_below (GtkWidget *widget)
+{
+  if (entry_of (widget))
+    kh_bench_entry_refresh (widget);
+  else
+    for (GtkWidget *child = gtk_widget_get_first_child (widget); child; child = gtk_widget_get_next_sibling (child))
+      kh_bench_refresh_below (child);
+}

@@ -1,0 +1,28 @@
+/* SPDX-License-Identifier: MIT */
+#pragma once
+#include <gtk/gtk.h>
+#include "app/session.h"
+
+/* What the pages of the bench are made of. */
+
+/* A page: one column in a scrolled window. '*column' is where rows go. */
+GtkWidget *kh_bench_page_new (GtkWidget **column);
+GtkWidget *kh_bench_heading_new (const char *text);
+GtkWidget *kh_bench_note_new (const char *text);            /* second-rank words that wrap */
+/* "Label  [widget]" in one row; the label is the widget's mnemonic and name. */
+GtkWidget *kh_bench_row_new (const char *label, GtkWidget *widget);
+
+/* Connects to a signal of the session for as long as the widget lives. */
+void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped);
+
+/* A number typed with its unit. Tries the text; TRUE: it was taken over. FALSE:
+ * *fault (owned) says what is wrong, and nothing was changed. */
+typedef gboolean (*KhTryText) (gpointer data, const char *text, char **fault);
+typedef char *(*KhDupText) (gpointer data); /* what stands there now */
+
+/* An entry that tries its text on Enter and on losing the focus, and shows a
+ * fault beneath it. 'data' is freed with it. */
+GtkWidget *kh_bench_entry_new (KhTryText try_text, KhDupText dup_text, gpointer data, GDestroyNotify free_data);
+void kh_bench_entry_refresh (GtkWidget *entry); /* shows what stands there now, unless it is being typed in */
+/* Refreshes every such entry beneath a widget. */
+void kh_bench_refresh_below (GtkWidget *widget);

@@ -1,0 +1,7 @@
+/* SPDX-License-Identifier: MIT */
+#pragma once
+#include <gtk/gtk.h>
+#include "app/session.h"
+
+/* The Panels page of the bench. Keeps a reference to the session. */
+GtkWidget *kh_panels_page_new (KhSession *session);

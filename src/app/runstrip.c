@@ -1,0 +1,306 @@
+/* SPDX-License-Identifier: MIT */
+#include "app/runstrip.h"
+#include "app/bench.h"
+#include "app/player.h"
+#include "app/runwords.h"
+#include "app/scheme.h"
+#include <glib/gi18n-lib.h>
+#include <math.h>
+
+static const double speeds[] = { 1, 2, 5, 10, 20, 50 };
+
+typedef struct
+{
+  KhSession *session;
+  GtkWidget *play, *speed, *when, *where, *doing, *area, *hands[2];
+  gboolean filling;
+} Strip;
+
+static KhStripPicture picture_of (Strip *strip, double width, double height)
+{
+  return (KhStripPicture){ kh_scheme_get (), width, height, 11, kh_session_get_played_tick (strip->session) };
+}
+
+static void draw_cb (GtkDrawingArea *area, cairo_t *cr, int width, int height, gpointer data)
+{
+  Strip *strip = data;
+  KhStripData *lanes = kh_session_get_strip (strip->session, kh_session_get_hand (strip->session));
+  KhStripPicture picture = picture_of (strip, width, height);
+  if (lanes)
+    kh_strip_picture_draw (&picture, cr, lanes);
+}
+
+/* ---- where it is, in words ---- */
+
+static const char *waiting_words (Strip *strip)
+{
+  const KhReview *review = kh_session_get_review (strip->session);
+  if (!kh_session_get_preview (strip->session))
+    return _ ("The preview is off.");
+  if (review->run_fault)
+    return review->run_fault;
+  return kh_session_is_working (strip->session) ? _ ("Driving…") : _ ("No run.");
+}
+
+static void show_moment (GtkWidget *widget)
+{
+  Strip *strip = g_object_get_data (G_OBJECT (widget), "kh-strip");
+  const KhTrace *trace = kh_session_get_trace (strip->session);
+  const KhPlan *plan = kh_session_get_plan (strip->session);
+  KhHand hand = kh_session_get_hand (strip->session);
+  strip->filling = TRUE;
+  for (int h = 0; h < 2; h++)
+    gtk_toggle_button_set_active (GTK_TOGGLE_BUTTON (strip->hands[h]), (KhHand)h == hand);
+  for (guint i = 0; i < G_N_ELEMENTS (speeds); i++)
+    if (speeds[i] == kh_session_get_speed (strip->session))
+      gtk_drop_down_set_selected (GTK_DROP_DOWN (strip->speed), i);
+  strip->filling = FALSE;
+  gboolean playing = kh_session_get_playing (strip->session);
+  gtk_button_set_icon_name (GTK_BUTTON (strip->play),
+                            playing ? "media-playback-pause-symbolic" : "media-playback-start-symbolic");
+  gtk_accessible_update_property (GTK_ACCESSIBLE (strip->play), GTK_ACCESSIBLE_PROPERTY_LABEL,
+                                  playing ? _ ("Pause") : _ ("Play"), -1);
+  gtk_widget_set_tooltip_text (strip->play, playing ? _ ("Pause") : _ ("Play"));
+  gtk_widget_queue_draw (strip->area);
+  if (!trace)
+    {
+      gtk_label_set_text (GTK_LABEL (strip->when), "");
+      gtk_label_set_text (GTK_LABEL (strip->where), "");
+      gtk_label_set_text (GTK_LABEL (strip->doing), waiting_words (strip));
+      return;
+    }
+  gsize tick = kh_session_get_played_tick (strip->session);
+  g_autofree char *when = kh_run_words_dup_when (trace, tick), *doing = kh_run_words_dup_doing (plan, trace, tick),
+                  *free_ways = kh_run_words_dup_free (plan, trace, tick);
+  gtk_label_set_text (GTK_LABEL (strip->when), when);
+  gtk_label_set_text (GTK_LABEL (strip->doing), doing);
+  gtk_label_set_text (GTK_LABEL (strip->where), free_ways);
+  g_autofree char *name = g_strdup_printf ("%s. %s. %s", when, doing, free_ways);
+  gtk_accessible_update_property (GTK_ACCESSIBLE (strip->area), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
+}
+
+/* ---- moving the played moment ---- */
+
+static void scrub_to (Strip *strip, double x)
+{
+  KhStripData *lanes = kh_session_get_strip (strip->session, kh_session_get_hand (strip->session));
+  KhStripPicture picture = picture_of (strip, gtk_widget_get_width (strip->area), gtk_widget_get_height (strip->area));
+  if (!lanes)
+    return;
+  kh_session_set_playing (strip->session, FALSE);
+  kh_session_set_played_tick (strip->session, kh_strip_picture_tick_at (&picture, lanes, x));
+}
+
+static void drag_begin_cb (GtkGestureDrag *drag, double x, double y, Strip *strip)
+{
+  gtk_widget_grab_focus (strip->area);
+  scrub_to (strip, x);
+}
+
+static void drag_update_cb (GtkGestureDrag *drag, double dx, double dy, Strip *strip)
+{
+  double x, y;
+  if (gtk_gesture_drag_get_start_point (drag, &x, &y))
+    scrub_to (strip, x + dx);
+}
+
+static void move_by (Strip *strip, gint64 ticks)
+{
+  gint64 tick = (gint64)kh_session_get_played_tick (strip->session) + ticks;
+  kh_session_set_playing (strip->session, FALSE);
+  kh_session_set_played_tick (strip->session, (gsize)MAX (tick, 0));
+}
+
+/* To the next or the last change of state: what there is to see. */
+static void move_to_event (Strip *strip, int step)
+{
+  const KhTrace *trace = kh_session_get_trace (strip->session);
+  gsize now = kh_session_get_played_tick (strip->session);
+  if (!trace)
+    return;
+  gsize to = step > 0 ? kh_trace_get_n_ticks (trace) - 1 : 0;
+  for (guint i = 0; i < trace->events->len; i++)
+    {
+      gsize at = g_array_index (trace->events, KhEvent, i).tick;
+      if (step < 0 && at < now)
+        to = at;
+      if (step > 0 && at > now)
+        {
+          to = at;
+          break;
+        }
+    }
+  kh_session_set_playing (strip->session, FALSE);
+  kh_session_set_played_tick (strip->session, to);
+}
+
+static gboolean key_cb (GtkEventControllerKey *controller, guint keyval, guint code, GdkModifierType state,
+                        Strip *strip)
+{
+  const KhTrace *trace = kh_session_get_trace (strip->session);
+  gint64 big = state & GDK_SHIFT_MASK ? 100 : 10;
+  switch (keyval)
+    {
+    case GDK_KEY_Left:
+    case GDK_KEY_KP_Left:
+      move_by (strip, -big);
+      return TRUE;
+    case GDK_KEY_Right:
+    case GDK_KEY_KP_Right:
+      move_by (strip, big);
+      return TRUE;
+    case GDK_KEY_Page_Up:
+      move_to_event (strip, -1);
+      return TRUE;
+    case GDK_KEY_Page_Down:
+      move_to_event (strip, 1);
+      return TRUE;
+    case GDK_KEY_Home:
+      kh_session_set_played_tick (strip->session, 0);
+      return TRUE;
+    case GDK_KEY_End:
+      if (trace)
+        kh_session_set_played_tick (strip->session, kh_trace_get_n_ticks (trace) - 1);
+      return TRUE;
+    case GDK_KEY_space:
+      kh_session_set_playing (strip->session, !kh_session_get_playing (strip->session));
+      return TRUE;
+    default:
+      return FALSE;
+    }
+}
+
+/* ---- controls ---- */
+
+static void begin_cb (Strip *strip)
+{
+  kh_session_set_playing (strip->session, FALSE);
+  kh_session_set_played_tick (strip->session, 0);
+}
+
+static void back_cb (Strip *strip) { move_to_event (strip, -1); }
+
+static void on_cb (Strip *strip) { move_to_event (strip, 1); }
+
+static void play_cb (Strip *strip)
+{
+  kh_session_set_playing (strip->session, !kh_session_get_playing (strip->session));
+}
+
+static void speed_cb (Strip *strip)
+{
+  guint chosen = gtk_drop_down_get_selected (GTK_DROP_DOWN (strip->speed));
+  if (!strip->filling && chosen < G_N_ELEMENTS (speeds))
+    kh_session_set_speed (strip->session, speeds[chosen]);
+}
+
+static void hand_cb (GtkToggleButton *button, Strip *strip)
+{
+  if (!strip->filling && gtk_toggle_button_get_active (button))
+    kh_session_set_hand (strip->session,
+                         GTK_WIDGET (button) == strip->hands[KH_HAND_RIGHT] ? KH_HAND_RIGHT : KH_HAND_LEFT);
+}
+
+static GtkWidget *icon_button_new (const char *icon, const char *words, GCallback callback, Strip *strip)
+{
+  GtkWidget *button = gtk_button_new_from_icon_name (icon);
+  gtk_widget_set_tooltip_text (button, words);
+  gtk_accessible_update_property (GTK_ACCESSIBLE (button), GTK_ACCESSIBLE_PROPERTY_LABEL, words, -1);
+  g_signal_connect_swapped (button, "clicked", callback, strip);
+  return button;
+}
+
+static GtkWidget *words_new (const char *css)
+{
+  GtkWidget *label = gtk_label_new ("");
+  gtk_label_set_xalign (GTK_LABEL (label), 0);
+  gtk_label_set_ellipsize (GTK_LABEL (label), PANGO_ELLIPSIZE_END);
+  gtk_widget_add_css_class (label, css);
+  return label;
+}
+
+static GtkWidget *controls_new (Strip *strip)
+{
+  const char *const times[] = { "1 ×", "2 ×", "5 ×", "10 ×", "20 ×", "50 ×", NULL };
+  GtkWidget *box = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 8),
+            *transport = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0);
+  GtkWidget *texts = gtk_box_new (GTK_ORIENTATION_VERTICAL, 1), *hands = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0);
+  strip->play = icon_button_new ("media-playback-start-symbolic", _ ("Play"), G_CALLBACK (play_cb), strip);
+  gtk_widget_add_css_class (transport, "linked");
+  gtk_box_append (GTK_BOX (transport),
+                  icon_button_new ("media-skip-backward-symbolic", _ ("To the start"), G_CALLBACK (begin_cb), strip));
+  gtk_box_append (GTK_BOX (transport),
+                  icon_button_new ("go-previous-symbolic", _ ("Back to the last change"), G_CALLBACK (back_cb), strip));
+  gtk_box_append (GTK_BOX (transport), strip->play);
+  gtk_box_append (GTK_BOX (transport),
+                  icon_button_new ("go-next-symbolic", _ ("On to the next change"), G_CALLBACK (on_cb), strip));
+  gtk_widget_set_valign (transport, GTK_ALIGN_CENTER);
+  strip->speed = gtk_drop_down_new_from_strings (times);
+  gtk_widget_set_valign (strip->speed, GTK_ALIGN_CENTER);
+  gtk_accessible_update_property (GTK_ACCESSIBLE (strip->speed), GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Speed of playing"),
+                                  -1);
+  g_signal_connect_swapped (strip->speed, "notify::selected", G_CALLBACK (speed_cb), strip);
+  strip->when = words_new ("kh-heading");
+  strip->doing = words_new ("kh-heading");
+  strip->where = words_new ("kh-second");
+  gtk_label_set_ellipsize (GTK_LABEL (strip->when), PANGO_ELLIPSIZE_NONE);
+  gtk_label_set_width_chars (GTK_LABEL (strip->when), 17);
+  gtk_box_append (GTK_BOX (texts), strip->doing);
+  gtk_box_append (GTK_BOX (texts), strip->where);
+  gtk_widget_set_hexpand (texts, TRUE);
+  gtk_widget_add_css_class (hands, "kh-switcher");
+  gtk_widget_set_valign (hands, GTK_ALIGN_CENTER);
+  for (int h = 0; h < 2; h++)
+    {
+      strip->hands[h] = gtk_toggle_button_new_with_label (h == KH_HAND_RIGHT ? _ ("Right hand") : _ ("Left hand"));
+      g_signal_connect (strip->hands[h], "toggled", G_CALLBACK (hand_cb), strip);
+      gtk_box_append (GTK_BOX (hands), strip->hands[h]);
+    }
+  gtk_toggle_button_set_group (GTK_TOGGLE_BUTTON (strip->hands[1]), GTK_TOGGLE_BUTTON (strip->hands[0]));
+  gtk_box_append (GTK_BOX (box), transport);
+  gtk_box_append (GTK_BOX (box), strip->speed);
+  gtk_box_append (GTK_BOX (box), strip->when);
+  gtk_box_append (GTK_BOX (box), texts);
+  gtk_box_append (GTK_BOX (box), hands);
+  return box;
+}
+
+static void strip_free (gpointer data)
+{
+  Strip *strip = data;
+  g_object_unref (strip->session);
+  g_free (strip);
+}
+
+GtkWidget *kh_run_strip_new (KhSession *session)
+{
+  Strip *strip = g_new0 (Strip, 1);
+  GtkWidget *widget = gtk_box_new (GTK_ORIENTATION_VERTICAL, 4);
+  GtkGesture *drag = gtk_gesture_drag_new ();
+  GtkEventController *keys = gtk_event_controller_key_new ();
+  strip->session = g_object_ref (session);
+  g_object_set_data_full (G_OBJECT (widget), "kh-strip", strip, strip_free);
+  gtk_widget_add_css_class (widget, "kh-strip");
+  GtkWidget *controls = controls_new (strip);
+  gtk_widget_set_margin_start (controls, 12);
+  gtk_widget_set_margin_end (controls, 12);
+  gtk_widget_set_margin_top (controls, 6);
+  strip->area = gtk_drawing_area_new ();
+  gtk_widget_set_vexpand (strip->area, TRUE);
+  gtk_widget_set_focusable (strip->area, TRUE);
+  gtk_drawing_area_set_draw_func (GTK_DRAWING_AREA (strip->area), draw_cb, strip, NULL);
+  g_signal_connect (drag, "drag-begin", G_CALLBACK (drag_begin_cb), strip);
+  g_signal_connect (drag, "drag-update", G_CALLBACK (drag_update_cb), strip);
+  g_signal_connect (keys, "key-pressed", G_CALLBACK (key_cb), strip);
+  gtk_widget_add_controller (strip->area, GTK_EVENT_CONTROLLER (drag));
+  gtk_widget_add_controller (strip->area, keys);
+  gtk_box_append (GTK_BOX (widget), controls);
+  gtk_box_append (GTK_BOX (widget), strip->area);
+  kh_player_attach (widget, session);
+  kh_bench_follow (widget, session, "player-changed", G_CALLBACK (show_moment));
+  kh_bench_follow (widget, session, "review-changed", G_CALLBACK (show_moment));
+  g_signal_connect_object (gtk_settings_get_default (), "notify::gtk-application-prefer-dark-theme",
+                           G_CALLBACK (gtk_widget_queue_draw), strip->area, G_CONNECT_SWAPPED);
+  show_moment (widget);
+  return widget;
+}
