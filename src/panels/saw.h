@@ -49,7 +49,12 @@ typedef struct
   int64_t left_nm;  /* usable - sum lengths - (n - 1) * kerf */
 } KhPattern;
 
-typedef enum { KH_CANNOT_TOO_LONG, KH_CANNOT_TOO_LITTLE_STOCK, KH_CANNOT_NO_STOCK } KhCannotWhy;
+typedef enum
+{
+  KH_CANNOT_TOO_LONG,         /* by over_nm, for the longest stock there is any of */
+  KH_CANNOT_TOO_LITTLE_STOCK, /* the longest pieces, until the rest can be met */
+  KH_CANNOT_NO_STOCK          /* the order lists none */
+} KhCannotWhy;
 typedef struct { int64_t length_nm; int count; KhCannotWhy why; int64_t over_nm; } KhCannotCut;
 
 typedef struct

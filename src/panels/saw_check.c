@@ -173,7 +173,7 @@ static gboolean judge_cannot (const KhSawOrder *order, const KhSawPlan *plan, GE
   for (guint s = 0; s < order->stock->len; s++)
     {
       const KhSawStock *stock = &g_array_index (order->stock, KhSawStock, s);
-      if (stock->count == 0 || stock->length_nm - 2 * order->end_trim_nm <= 0)
+      if (stock->count == 0)
         continue;
       longest = MAX (longest, stock->length_nm - 2 * order->end_trim_nm);
       any = TRUE;
@@ -186,10 +186,13 @@ static gboolean judge_cannot (const KhSawOrder *order, const KhSawPlan *plan, GE
         if (g_array_index (order->pieces, KhSawPiece, k).length_nm == cannot->length_nm)
           asked += g_array_index (order->pieces, KhSawPiece, k).count;
       gboolean too_long = any && cannot->length_nm > longest;
-      gboolean holds = cannot->why == KH_CANNOT_NO_STOCK ? !any && cannot->count == asked
-                       : cannot->why == KH_CANNOT_TOO_LONG
-                           ? too_long && cannot->count == asked && cannot->over_nm == cannot->length_nm - longest
-                           : any && !too_long && cannot->count <= asked;
+      gboolean holds = FALSE;
+      if (cannot->why == KH_CANNOT_NO_STOCK)
+        holds = order->stock->len == 0 && cannot->count == asked;
+      else if (cannot->why == KH_CANNOT_TOO_LONG)
+        holds = too_long && cannot->count == asked && cannot->over_nm == cannot->length_nm - longest;
+      else
+        holds = order->stock->len > 0 && !too_long && cannot->count <= asked && (any || cannot->count == asked);
       if (cannot->count < 1 || !holds)
         return REFUSE ("what is said to be impossible of pieces of %" G_GINT64_FORMAT " nm does not hold",
                        cannot->length_nm);

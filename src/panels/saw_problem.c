@@ -63,23 +63,31 @@ static void read_kinds (KhSawProblem *problem, const KhSawOrder *order)
     }
 }
 
+/* Longer than the longest strip there is; or there is no strip at all. */
 static void tell_too_long (KhSawProblem *problem, const KhSawOrder *order, GArray *cannot_cut)
 {
   int64_t longest = 0;
-  for (int k = 0; k < problem->n_kinds; k++)
-    longest = MAX (longest, problem->kinds[k].capacity - order->kerf_nm);
+  gboolean any = FALSE;
+  for (guint s = 0; s < order->stock->len; s++)
+    {
+      const KhSawStock *stock = &g_array_index (order->stock, KhSawStock, s);
+      if (stock->count == 0)
+        continue;
+      any = TRUE;
+      longest = MAX (longest, stock->length_nm - 2 * order->end_trim_nm);
+    }
   int n = 0;
   for (int i = 0; i < problem->n_items; i++)
     {
       const KhSawItem *item = &problem->items[i];
-      if (item->length <= longest)
+      if (any && item->length <= longest)
         {
           problem->items[n++] = *item;
           continue;
         }
-      gboolean none = problem->n_kinds == 0;
-      KhCannotCut cannot = { item->length, item->demand, none ? KH_CANNOT_NO_STOCK : KH_CANNOT_TOO_LONG,
-                             none ? 0 : item->length - longest };
+      KhCannotWhy none = order->stock->len == 0 ? KH_CANNOT_NO_STOCK : KH_CANNOT_TOO_LITTLE_STOCK;
+      KhCannotCut cannot
+          = { item->length, item->demand, any ? KH_CANNOT_TOO_LONG : none, any ? item->length - longest : 0 };
       g_array_append_val (cannot_cut, cannot);
     }
   problem->n_items = n;
