@@ -58,7 +58,7 @@ static void append_saw_plan (GString *json, const KhSawPlan *plan)
 
 static void append_cannot (GString *json, const GArray *cannot)
 {
-  static const char *const why[] = { "too long", "too little stock", "no stock" };
+  static const char *const why[] = { "too long", "too little stock", "too little stock" };
   g_string_append (json, "\"cannot_cut\": [");
   for (guint i = 0; i < cannot->len; i++)
     {

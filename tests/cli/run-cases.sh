@@ -6,7 +6,7 @@
 # regular expression, over standard output and error together; empty: there must be no output)
 # Each runs in a folder of its own that holds copies of the plans and examples.
 set -u
-k=$1 cases=$2 plans=$3 examples=$4
+k=$(realpath "$1") cases=$2 plans=$3 examples=$4
 export k
 work=$(mktemp -d) || exit 99
 trap 'chmod -R u+w "$work"; rm -rf "$work"' EXIT
