@@ -45,6 +45,9 @@ static char *dup_words (const KhPlan *plan, const KhCutList *list, const KhSawOr
   for (guint i = 0; i < list->rows->len; i++)
     append_row (text, list, &g_array_index (list->rows, KhCutRow, i));
   append_points (text, list);
+  g_autoptr (GPtrArray) notes = kh_cut_list_dup_board_notes (plan);
+  for (guint i = 0; i < notes->len; i++)
+    g_string_append_printf (text, "%s\n", (const char *)g_ptr_array_index (notes, i));
   kh_saw_words_append (text, order, saw, plan->build.currency);
   g_string_append_printf (text, "%s\n%s\n",
                           _ ("At the saw: guard and riving knife fitted, push stick for short pieces, no loose "

@@ -123,6 +123,12 @@ void kh_judge_panels (KhReview *review, const KhPlan *plan)
   if (review->panels_fault)
     tell (review, "joint", KH_SEVERITY_BREAKS, 0, 0, g_strdup (_ ("The panels cannot be worked out.")),
           g_strdup (review->panels_fault));
+  if (review->cut_list)
+    {
+      g_autoptr (GPtrArray) notes = kh_cut_list_dup_board_notes (plan);
+      for (guint i = 0; i < notes->len; i++)
+        tell (review, "board", KH_SEVERITY_NOTES, 0, 0, g_strdup (g_ptr_array_index (notes, i)), g_strdup (""));
+    }
   if (!review->saw_plan)
     return;
   for (guint i = 0; i < review->saw_plan->cannot_cut->len; i++)
