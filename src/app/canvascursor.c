@@ -82,7 +82,7 @@ void kh_canvas_name_cursor (KhCanvas *self)
   g_autofree char *name
       = on_edges (self) ? kh_words_dup_edge_state (plan, self->edge) : kh_words_dup_cell_state (plan, self->cell);
   gtk_accessible_update_property (GTK_ACCESSIBLE (self->cursor), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
-  if (gtk_widget_has_focus (self->cursor) && gtk_widget_has_visible_focus (self->cursor))
+  if (gtk_widget_has_visible_focus (self->cursor))
     /* Translators: the lattice cursor, moved by the arrow keys, then where it is */
     kh_canvas_say_pointed (self, g_strdup_printf (_ ("Cursor: %s"), name));
 }
@@ -129,6 +129,8 @@ static void after_move (KhCanvas *self)
 {
   self->has_menu_place = FALSE;
   gtk_widget_grab_focus (self->cursor);
+  if (GTK_IS_WINDOW (gtk_widget_get_root (GTK_WIDGET (self))))
+    gtk_window_set_focus_visible (GTK_WINDOW (gtk_widget_get_root (GTK_WIDGET (self))), TRUE);
   bring_into_view (self);
   kh_canvas_name_cursor (self);
   gtk_widget_queue_allocate (GTK_WIDGET (self));

@@ -216,7 +216,8 @@ static GtkWidget *new_fields (Dialog *dialog)
   dialog->rows = gtk_spin_button_new_with_range (1, KH_LATTICE_MOST, 1);
   gtk_spin_button_set_value (GTK_SPIN_BUTTON (dialog->columns), 8);
   gtk_spin_button_set_value (GTK_SPIN_BUTTON (dialog->rows), 6);
-  gtk_entry_set_activates_default (GTK_ENTRY (gtk_editable_get_delegate (GTK_EDITABLE (dialog->columns))), TRUE);
+  gtk_text_set_activates_default (GTK_TEXT (gtk_editable_get_delegate (GTK_EDITABLE (dialog->columns))), TRUE);
+  gtk_text_set_activates_default (GTK_TEXT (gtk_editable_get_delegate (GTK_EDITABLE (dialog->rows))), TRUE);
   add_row (GTK_GRID (grid), 0, _ ("_Begin with"), dialog->preset, NULL);
   add_row (GTK_GRID (grid), 1, _ ("_Columns"), dialog->columns, NULL);
   add_row (GTK_GRID (grid), 2, _ ("_Rows"), dialog->rows, NULL);

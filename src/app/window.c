@@ -366,5 +366,7 @@ KhWindow *kh_window_new_take (GtkApplication *app, KhSession *session)
 {
   KhWindow *self = g_object_new (KH_TYPE_WINDOW, "application", app, NULL);
   kh_window_set_session_take (self, session);
+  kh_canvas_grab_cursor (KH_CANVAS (self->canvas)); /* arrows and tool letters work at once */
+  gtk_window_set_focus_visible (GTK_WINDOW (self), FALSE);
   return self;
 }
