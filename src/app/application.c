@@ -6,6 +6,7 @@
 #include "app/settings.h"
 #include "app/windowprivate.h"
 #include "config.h"
+#include "files/examples.h"
 #include "files/planfile.h"
 #include <glib-unix.h>
 #include <glib/gi18n-lib.h>
@@ -18,8 +19,6 @@ struct _KhApplication
 };
 
 G_DEFINE_FINAL_TYPE (KhApplication, kh_application, GTK_TYPE_APPLICATION)
-
-#define FIRST_EXAMPLE "examples/first-maze.mazeplan"
 
 /* ---- windows ---- */
 
@@ -68,12 +67,12 @@ static void new_empty_window (KhApplication *self)
 
 typedef struct
 {
-  char *path;
+  char *path; /* or, for an example, its name: it has no file, saving asks where to */
   KhPlan *plan;
   GPtrArray *faults;
-  KhWindow *near;      /* weak */
-  gboolean as_example; /* shown without its file: saving asks where to */
-  gboolean quietly;    /* a plan that is gone is no message: the last one, at the start */
+  KhWindow *near; /* weak */
+  gboolean is_example;
+  gboolean quietly; /* a plan that is gone is no message: the last one, at the start */
 } Opening;
 
 static void opening_free (Opening *opening)
@@ -88,7 +87,11 @@ static void opening_free (Opening *opening)
 static void load_thread (GTask *task, gpointer source, gpointer data, GCancellable *cancellable)
 {
   Opening *opening = data;
-  opening->plan = kh_plan_file_load (opening->path, &opening->faults);
+  g_autofree char *text = opening->is_example ? kh_example_dup_text (opening->path) : NULL;
+  if (text != NULL)
+    opening->plan = kh_plan_file_parse (text, strlen (text), opening->path, &opening->faults);
+  else
+    opening->plan = kh_plan_file_load (opening->path, &opening->faults);
   g_task_return_boolean (task, opening->plan != NULL);
 }
 
@@ -120,6 +123,8 @@ void kh_application_remember_path (const char *path)
     kh_settings_set_string ("last-plan", path);
 }
 
+static void open_example (KhApplication *self, const char *name, KhWindow *near);
+
 static void loaded_cb (GObject *source, GAsyncResult *result, gpointer data)
 {
   KhApplication *self = KH_APPLICATION (source);
@@ -127,14 +132,14 @@ static void loaded_cb (GObject *source, GAsyncResult *result, gpointer data)
   if (opening->plan == NULL)
     {
       if (opening->quietly && !g_file_test (opening->path, G_FILE_TEST_EXISTS))
-        new_empty_window (self);
+        open_example (self, KH_EXAMPLE_FIRST, NULL);
       else
         tell_faults (self, opening);
     }
   else
     {
       KhSession *session = kh_session_new_take (g_steal_pointer (&opening->plan));
-      if (!opening->as_example)
+      if (!opening->is_example)
         {
           kh_session_set_file (session, opening->path);
           kh_application_remember_path (opening->path);
@@ -167,30 +172,13 @@ void kh_application_open_path (KhApplication *self, const char *path, KhWindow *
   load (self, opening);
 }
 
-char *kh_application_dup_data_path (const char *name)
+static void open_example (KhApplication *self, const char *name, KhWindow *near)
 {
-  const char *own = g_getenv ("KERFHAND_DATA"); /* a run out of the build folder */
-  const char *folders[] = { own != NULL ? own : KH_DATA_DIR, KH_DATA_DIR };
-  for (int i = 0; i < 2; i++)
-    {
-      g_autofree char *path = g_build_filename (folders[i], name, NULL);
-      if (g_file_test (path, G_FILE_TEST_IS_REGULAR))
-        return g_steal_pointer (&path);
-    }
-  return NULL;
-}
-
-static gboolean open_example (KhApplication *self, KhWindow *near)
-{
-  char *path = kh_application_dup_data_path (FIRST_EXAMPLE);
-  if (path == NULL)
-    return FALSE;
   Opening *opening = g_new0 (Opening, 1);
-  opening->path = path;
-  opening->as_example = TRUE;
+  opening->path = g_strdup (name);
+  opening->is_example = TRUE;
   g_set_weak_pointer (&opening->near, near);
   load (self, opening);
-  return TRUE;
 }
 
 /* ---- recovery ---- */
@@ -273,9 +261,10 @@ static void help_cb (GSimpleAction *action, GVariant *target, gpointer data)
 static void example_cb (GSimpleAction *action, GVariant *target, gpointer data)
 {
   GtkWindow *active = gtk_application_get_active_window (data);
-  if (!open_example (data, KH_IS_WINDOW (active) ? KH_WINDOW (active) : NULL))
-    kh_window_tell (active, _ ("The example is not installed."),
-                    _ ("Install Kerfhand with its data, or open a plan of your own."));
+  g_auto (GStrv) names = kh_example_dup_names ();
+  const char *name = g_variant_get_string (target, NULL);
+  if (g_strv_contains ((const char *const *)names, name))
+    open_example (data, name, KH_IS_WINDOW (active) ? KH_WINDOW (active) : NULL);
 }
 
 static void set_units_cb (GSimpleAction *action, GVariant *state, gpointer data)
@@ -297,7 +286,7 @@ static const GActionEntry entries[] = {
   { "quit", quit_cb },
   { "about", about_cb },
   { "help", help_cb },
-  { "example", example_cb },
+  { "example", example_cb, "s" },
   { "units", NULL, "s", "'mm'", set_units_cb },
   { "scheme", NULL, "s", "'follow'", set_scheme_cb },
 };
@@ -307,6 +296,27 @@ static void set_state_from_settings (KhApplication *self, const char *action, co
   g_autofree char *value = kh_settings_dup_string (action, fallback);
   g_simple_action_set_state (G_SIMPLE_ACTION (g_action_map_lookup_action (G_ACTION_MAP (self), action)),
                              g_variant_new_string (value));
+}
+
+/* The examples under their own titles, for every window's menus. */
+GMenuModel *kh_application_get_examples (void)
+{
+  static GMenu *menu;
+  if (menu != NULL)
+    return G_MENU_MODEL (menu);
+  g_auto (GStrv) names = kh_example_dup_names ();
+  menu = g_menu_new ();
+  for (int i = 0; names[i] != NULL; i++)
+    {
+      g_autofree char *text = kh_example_dup_text (names[i]);
+      GPtrArray *faults = NULL;
+      g_autoptr (KhPlan) plan = text != NULL ? kh_plan_file_parse (text, strlen (text), names[i], &faults) : NULL;
+      g_autoptr (GMenuItem) item = g_menu_item_new (plan != NULL ? plan->title : names[i], NULL);
+      g_clear_pointer (&faults, g_ptr_array_unref);
+      g_menu_item_set_action_and_target (item, "app.example", "s", names[i]);
+      g_menu_append_item (menu, item);
+    }
+  return G_MENU_MODEL (menu);
 }
 
 /* ---- life ---- */
@@ -354,8 +364,8 @@ static void activate (GApplication *application)
       opening->quietly = TRUE;
       load (self, opening);
     }
-  else if (!open_example (self, NULL))
-    new_empty_window (self);
+  else
+    open_example (self, KH_EXAMPLE_FIRST, NULL);
 }
 
 static void open_files (GApplication *application, GFile **files, int n, const char *hint)

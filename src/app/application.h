@@ -18,4 +18,4 @@ void kh_application_open_path (KhApplication *self, const char *path, KhWindow *
 void kh_application_show_session_take (KhWindow *near, KhSession *session);
 void kh_application_remember_path (const char *path); /* recent plans, last plan */
 void kh_application_stop_quitting (KhApplication *self); /* a window wants to stay */
-char *kh_application_dup_data_path (const char *name); /* "examples/first.mazeplan": NULL where it is not found */
+GMenuModel *kh_application_get_examples (void); /* borrowed */

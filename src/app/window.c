@@ -222,27 +222,31 @@ static void told_cb (GtkDialog *dialog, int response, gpointer data)
   gtk_window_destroy (GTK_WINDOW (dialog));
 }
 
+/* Many faults: all of them, in a box that scrolls. */
+static void add_long_detail (GtkMessageDialog *dialog, const char *detail)
+{
+  GtkWidget *label = gtk_label_new (detail);
+  GtkWidget *scrolled = gtk_scrolled_window_new ();
+  gtk_label_set_wrap (GTK_LABEL (label), TRUE);
+  gtk_label_set_wrap_mode (GTK_LABEL (label), PANGO_WRAP_WORD_CHAR);
+  gtk_label_set_selectable (GTK_LABEL (label), TRUE);
+  gtk_label_set_xalign (GTK_LABEL (label), 0);
+  gtk_label_set_yalign (GTK_LABEL (label), 0);
+  gtk_scrolled_window_set_child (GTK_SCROLLED_WINDOW (scrolled), label);
+  gtk_scrolled_window_set_policy (GTK_SCROLLED_WINDOW (scrolled), GTK_POLICY_NEVER, GTK_POLICY_AUTOMATIC);
+  gtk_scrolled_window_set_min_content_height (GTK_SCROLLED_WINDOW (scrolled), 260);
+  gtk_scrolled_window_set_min_content_width (GTK_SCROLLED_WINDOW (scrolled), 520);
+  gtk_box_append (GTK_BOX (gtk_message_dialog_get_message_area (dialog)), scrolled);
+}
+
 void kh_window_tell (GtkWindow *parent, const char *heading, const char *detail)
 {
   GtkWidget *dialog = gtk_message_dialog_new (parent, GTK_DIALOG_MODAL | GTK_DIALOG_DESTROY_WITH_PARENT,
                                               GTK_MESSAGE_WARNING, GTK_BUTTONS_CLOSE, "%s", heading);
-  if (detail != NULL)
-    {
-      GtkWidget *area = gtk_message_dialog_get_message_area (GTK_MESSAGE_DIALOG (dialog));
-      GtkWidget *label = gtk_label_new (detail);
-      GtkWidget *scrolled = gtk_scrolled_window_new ();
-      gtk_label_set_wrap (GTK_LABEL (label), TRUE);
-      gtk_label_set_wrap_mode (GTK_LABEL (label), PANGO_WRAP_WORD_CHAR);
-      gtk_label_set_selectable (GTK_LABEL (label), TRUE);
-      gtk_label_set_xalign (GTK_LABEL (label), 0);
-      gtk_label_set_max_width_chars (GTK_LABEL (label), 64);
-      gtk_scrolled_window_set_child (GTK_SCROLLED_WINDOW (scrolled), label);
-      gtk_scrolled_window_set_policy (GTK_SCROLLED_WINDOW (scrolled), GTK_POLICY_NEVER, GTK_POLICY_AUTOMATIC);
-      gtk_scrolled_window_set_propagate_natural_height (GTK_SCROLLED_WINDOW (scrolled), TRUE);
-      gtk_scrolled_window_set_max_content_height (GTK_SCROLLED_WINDOW (scrolled), 320);
-      gtk_scrolled_window_set_min_content_width (GTK_SCROLLED_WINDOW (scrolled), 460);
-      gtk_box_append (GTK_BOX (area), scrolled);
-    }
+  if (detail != NULL && strlen (detail) < 400)
+    gtk_message_dialog_format_secondary_text (GTK_MESSAGE_DIALOG (dialog), "%s", detail);
+  else if (detail != NULL)
+    add_long_detail (GTK_MESSAGE_DIALOG (dialog), detail);
   g_signal_connect (dialog, "response", G_CALLBACK (told_cb), NULL);
   gtk_window_present (GTK_WINDOW (dialog));
 }

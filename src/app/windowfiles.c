@@ -141,7 +141,7 @@ void kh_window_fill_recent (KhWindow *self)
     }
   g_list_free_full (items, (GDestroyNotify)gtk_recent_info_unref);
   g_menu_append (menu, _ ("Open…"), "win.open");
-  g_menu_append (menu, _ ("Open the Example"), "app.example");
+  g_menu_append_submenu (menu, _ ("Open an Example"), kh_application_get_examples ());
   g_menu_append_section (menu, _ ("Recent plans"), G_MENU_MODEL (recent));
   gtk_menu_button_set_menu_model (GTK_MENU_BUTTON (self->open_button), G_MENU_MODEL (menu));
 }
