@@ -405,6 +405,13 @@ void kh_canvas_set_with_panels (KhCanvas *self, gboolean with_panels)
 
 const char *kh_canvas_get_pointed_text (KhCanvas *self) { return self->pointed_text != NULL ? self->pointed_text : ""; }
 
+void kh_canvas_locate (KhCanvas *self, KhVec mm, double *x, double *y)
+{
+  KhVec at = kh_view_to_device (&self->view, mm);
+  *x = at.x + KH_RULER_LEFT;
+  *y = at.y + KH_RULER_TOP;
+}
+
 void kh_canvas_grab_cursor (KhCanvas *self) { gtk_widget_grab_focus (self->cursor); }
 
 /* ---- life ---- */

@@ -35,4 +35,6 @@ void kh_canvas_show_finding (KhCanvas *self, int index);
 void kh_canvas_get_place (KhCanvas *self, KhEdge *edge, KhCell *cell);
 void kh_canvas_take_edit (KhCanvas *self, KhEdit *edit); /* NULL is taken, too: nothing to do */
 const char *kh_canvas_get_pointed_text (KhCanvas *self); /* for the status bar; borrowed */
+/* Where a place of the plan is seen, in the canvas's own coordinates. */
+void kh_canvas_locate (KhCanvas *self, KhVec mm, double *x, double *y);
 void kh_canvas_grab_cursor (KhCanvas *self); /* focus to the lattice cursor */

@@ -28,6 +28,7 @@ gboolean kh_window_is_untouched (KhWindow *self); /* may be used for another pla
 /* Says that the plan was brought back after a crash, with a way to the saved one. */
 void kh_window_say_recovered (KhWindow *self);
 void kh_window_save_recovery (KhWindow *self); /* now, whatever is unsaved */
+GtkWidget *kh_window_get_canvas (KhWindow *self); /* borrowed; a KhCanvas */
 void kh_window_update (KhWindow *self);        /* units changed */
 /* A message that must be read: what happened, and the details (may be NULL, may be long). */
 void kh_window_tell (GtkWindow *parent, const char *heading, const char *detail);
