@@ -97,17 +97,23 @@ static void end_gesture (KhCanvas *self)
   gtk_widget_queue_draw (GTK_WIDGET (self));
 }
 
-void kh_canvas_cancel (KhCanvas *self)
+static void leave_gesture (KhCanvas *self)
 {
-  if (!self->gesturing && !self->panning)
-    return;
   if (self->panning)
     {
       self->view.origin_x = self->pan_x;
       self->view.origin_y = self->pan_y;
       kh_canvas_drop_layers (self);
     }
-  end_gesture (self);
+  if (self->gesturing || self->panning)
+    end_gesture (self);
+}
+
+void kh_canvas_cancel (KhCanvas *self)
+{
+  if (!self->gesturing && !self->panning)
+    return;
+  leave_gesture (self);
   gtk_event_controller_reset (GTK_EVENT_CONTROLLER (self->drag));
 }
 
@@ -191,7 +197,10 @@ static void drag_end_cb (GtkGestureDrag *drag, double dx, double dy, KhCanvas *s
     kh_canvas_take_edit (self, kh_tool_get (self->tool)->make (kh_session_get_plan (self->session), &gesture));
 }
 
-static void drag_cancel_cb (GtkGesture *drag, GdkEventSequence *sequence, KhCanvas *self) { kh_canvas_cancel (self); }
+static void drag_cancel_cb (GtkGesture *drag, GdkEventSequence *sequence, KhCanvas *self)
+{
+  leave_gesture (self); /* the toolkit is resetting the gesture already */
+}
 
 static void long_press_cb (GtkGestureLongPress *press, double x, double y, KhCanvas *self)
 {

@@ -87,11 +87,16 @@ void kt_point (KhWindow *window, double x_mm, double y_mm)
   kt_x (line);
 }
 
+/* Held for some frames, as by a hand: a press and a release within one frame
+ * are taken for a lost grab by GTK 4.8, when it asks for the pointer between them. */
 void kt_click (KhWindow *window, double x_mm, double y_mm, int button)
 {
-  g_autofree char *line = g_strdup_printf ("click %d", button);
+  g_autofree char *down = g_strdup_printf ("mousedown %d", button);
+  g_autofree char *up = g_strdup_printf ("mouseup %d", button);
   kt_point (window, x_mm, y_mm);
-  kt_x (line);
+  kt_x (down);
+  kt_settle (60);
+  kt_x (up);
 }
 
 void kt_drag (KhWindow *window, double x0_mm, double y0_mm, double x1_mm, double y1_mm, int button)
@@ -143,6 +148,7 @@ static gboolean has_window (gpointer app)
 KhApplication *kt_start (void)
 {
   g_autoptr (GError) error = NULL;
+  g_set_prgname ("kerfhand"); /* as g_application_run would */
   KhApplication *app = kh_application_new ();
   if (!g_application_register (G_APPLICATION (app), NULL, &error))
     fail_msg ("%s", error->message);
