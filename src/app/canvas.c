@@ -19,15 +19,16 @@ enum
 static guint signals[N_SIGNALS];
 
 #define MARGIN 20      /* px round the plan when all of it is shown */
-#define MARGIN_SIDE 88 /* px at its sides: words of openings, key of the trail */
+#define MARGIN_WEST 88  /* px: words of openings */
+#define MARGIN_EAST 140 /* px: words of openings, key of the trail */
 
 /* ---- view ---- */
 
 static void forget_layers (KhCanvas *self)
 {
-  g_clear_object (&self->ground.texture);
-  g_clear_object (&self->run.texture);
-  g_clear_object (&self->rulers.texture);
+  g_clear_pointer (&self->ground, gsk_render_node_unref);
+  g_clear_pointer (&self->run, gsk_render_node_unref);
+  g_clear_pointer (&self->rulers, gsk_render_node_unref);
 }
 
 void kh_canvas_drop_layers (KhCanvas *self)
@@ -42,9 +43,10 @@ static void fit_view (KhCanvas *self)
   double width = self->view.width, height = self->view.height;
   if (self->session == NULL || width < 40 || height < 40)
     return;
-  double side = width > 6 * MARGIN_SIDE ? MARGIN_SIDE - MARGIN : 0;
-  kh_view_fit (&self->view, kh_session_get_plan (self->session), width - 2 * side, height, MARGIN);
-  self->view.origin_x += side;
+  gboolean roomy = width > 4 * MARGIN_EAST;
+  double west = roomy ? MARGIN_WEST - MARGIN : 0, east = roomy ? MARGIN_EAST - MARGIN : 0;
+  kh_view_fit (&self->view, kh_session_get_plan (self->session), width - west - east, height, MARGIN);
+  self->view.origin_x += west;
   self->view.width = width;
 }
 
@@ -148,8 +150,11 @@ static void init_picture (KhCanvas *self, KhPlanPicture *picture)
 
 typedef void (*DrawFunc) (KhCanvas *self, cairo_t *cr, int width, int height);
 
-/* Draws a layer into a picture at the screen's own resolution. */
-static GdkTexture *render (KhCanvas *self, int width, int height, DrawFunc draw)
+/* Draws a layer into a picture at the screen's own resolution, kept as one
+ * render node: the same node in the next frame costs nothing where nothing over
+ * it changes.  (A GdkTexture would do, but GTK 4.8's software renderer converts
+ * it pixel by pixel in every frame: 20 ms.) */
+static GskRenderNode *render (KhCanvas *self, int width, int height, DrawFunc draw)
 {
   int scale = gtk_widget_get_scale_factor (GTK_WIDGET (self));
   cairo_surface_t *surface = cairo_image_surface_create (CAIRO_FORMAT_ARGB32, width * scale, height * scale);
@@ -157,15 +162,14 @@ static GdkTexture *render (KhCanvas *self, int width, int height, DrawFunc draw)
   cairo_t *cr = cairo_create (surface);
   draw (self, cr, width, height);
   cairo_destroy (cr);
-  cairo_surface_flush (surface);
-  int stride = cairo_image_surface_get_stride (surface);
-  GBytes *bytes
-      = g_bytes_new_with_free_func (cairo_image_surface_get_data (surface), (gsize)stride * (gsize)(height * scale),
-                                    (GDestroyNotify)cairo_surface_destroy, surface);
-  GdkTexture *texture
-      = gdk_memory_texture_new (width * scale, height * scale, GDK_MEMORY_DEFAULT, bytes, (gsize)stride);
-  g_bytes_unref (bytes);
-  return texture;
+  GskRenderNode *node = gsk_cairo_node_new (&GRAPHENE_RECT_INIT (0, 0, (float) width, (float) height));
+  cr = gsk_cairo_node_get_draw_context (node);
+  cairo_set_source_surface (cr, surface, 0, 0);
+  cairo_pattern_set_filter (cairo_get_source (cr), CAIRO_FILTER_NEAREST);
+  cairo_paint (cr);
+  cairo_destroy (cr);
+  cairo_surface_destroy (surface);
+  return node;
 }
 
 static void draw_ground (KhCanvas *self, cairo_t *cr, int width, int height)
@@ -186,14 +190,6 @@ static const KhTrace *shown_trace (KhCanvas *self)
   return review->traces[kh_session_get_hand (self->session)];
 }
 
-static void draw_run (KhCanvas *self, cairo_t *cr, int width, int height)
-{
-  KhPlanPicture picture;
-  init_picture (self, &picture);
-  kh_plan_picture_draw_run (&picture, cr, &self->view, kh_session_get_plan (self->session),
-                            kh_session_get_review (self->session));
-}
-
 /* The key stands in the margin east of the plan, where there is room. */
 static void draw_key (KhCanvas *self, cairo_t *cr)
 {
@@ -201,27 +197,38 @@ static void draw_key (KhCanvas *self, cairo_t *cr)
   double pitch = kh_mm_from_nm (plan->lattice.pitch_nm);
   KhVec east = kh_view_to_device (&self->view, (KhVec){ plan->lattice.columns * pitch, 0 });
   KhPlanPicture picture;
-  if (self->view.width - east.x < MARGIN_SIDE - 4 || self->view.height < 300)
+  if (self->view.width - east.x < MARGIN_EAST - 8 || self->view.height < 300)
     return;
   init_picture (self, &picture);
-  kh_plan_picture_draw_key (&picture, cr, east.x + 12, self->view.height * 0.36, picture.hand);
+  kh_plan_picture_draw_key (&picture, cr, east.x + 14, self->view.height * 0.36, picture.hand);
 }
 
-static void draw_over (KhCanvas *self, cairo_t *cr)
+static void draw_run (KhCanvas *self, cairo_t *cr, int width, int height)
+{
+  KhPlanPicture picture;
+  init_picture (self, &picture);
+  kh_plan_picture_draw_run (&picture, cr, &self->view, kh_session_get_plan (self->session),
+                            kh_session_get_review (self->session));
+  draw_key (self, cr);
+}
+
+static void draw_robot (KhCanvas *self, cairo_t *cr)
 {
   const KhTrace *trace = shown_trace (self);
-  const KhPlan *plan = kh_session_get_plan (self->session);
-  KhGhostScene scene = {
-    .plan = plan, .view = &self->view, .scheme = kh_scheme_get (), .high_contrast = kh_scheme_is_high_contrast ()
-  };
-  if (trace != NULL)
-    {
-      KhPlanPicture picture;
-      init_picture (self, &picture);
-      kh_plan_picture_draw_robot (&picture, cr, &self->view, plan, trace,
-                                  MIN (picture.played_tick, kh_trace_get_n_ticks (trace) - 1));
-      draw_key (self, cr);
-    }
+  KhPlanPicture picture;
+  if (trace == NULL)
+    return;
+  init_picture (self, &picture);
+  kh_plan_picture_draw_robot (&picture, cr, &self->view, kh_session_get_plan (self->session), trace,
+                              MIN (picture.played_tick, kh_trace_get_n_ticks (trace) - 1));
+}
+
+static void draw_ghost (KhCanvas *self, cairo_t *cr)
+{
+  KhGhostScene scene = { .plan = kh_session_get_plan (self->session),
+                         .view = &self->view,
+                         .scheme = kh_scheme_get (),
+                         .high_contrast = kh_scheme_is_high_contrast () };
   if (self->gesturing)
     kh_tool_get (self->tool)->draw (&scene, &self->gesture, cr);
   else if (self->pointer_in && !self->panning && !self->space_down)
@@ -230,15 +237,42 @@ static void draw_over (KhCanvas *self, cairo_t *cr)
       KhGesture hover = { .from = at, .to = at };
       kh_tool_get (self->tool)->draw (&scene, &hover, cr);
     }
+}
+
+static void draw_cursor (KhCanvas *self, cairo_t *cr)
+{
   if (gtk_widget_has_visible_focus (self->cursor))
     kh_canvas_draw_cursor (self, cr);
 }
 
-static void append_layer (KhCanvas *self, GtkSnapshot *snapshot, KhLayer *layer, int width, int height, DrawFunc draw)
+/* What moves is drawn into a record first: only what it covers is painted anew
+ * in the window, which is most of what a frame costs. */
+static void append_record (KhCanvas *self, GtkSnapshot *snapshot, void (*draw) (KhCanvas *, cairo_t *))
 {
-  if (layer->texture == NULL)
-    layer->texture = render (self, width, height, draw);
-  gtk_snapshot_append_texture (snapshot, layer->texture, &GRAPHENE_RECT_INIT (0, 0, (float)width, (float)height));
+  cairo_surface_t *record = cairo_recording_surface_create (CAIRO_CONTENT_COLOR_ALPHA, NULL);
+  cairo_t *cr = cairo_create (record);
+  double x, y, width, height;
+  draw (self, cr);
+  cairo_destroy (cr);
+  cairo_recording_surface_ink_extents (record, &x, &y, &width, &height);
+  if (width > 0 && height > 0)
+    {
+      graphene_rect_t bounds = GRAPHENE_RECT_INIT ((float)floor (x) - 1, (float)floor (y) - 1, (float)ceil (width) + 3,
+                                                   (float)ceil (height) + 3);
+      cr = gtk_snapshot_append_cairo (snapshot, &bounds);
+      cairo_set_source_surface (cr, record, 0, 0);
+      cairo_paint (cr);
+      cairo_destroy (cr);
+    }
+  cairo_surface_destroy (record);
+}
+
+static void append_layer (KhCanvas *self, GtkSnapshot *snapshot, GskRenderNode **layer, int width, int height,
+                          DrawFunc draw)
+{
+  if (*layer == NULL)
+    *layer = render (self, width, height, draw);
+  gtk_snapshot_append_node (snapshot, *layer);
 }
 
 static void snapshot (GtkWidget *widget, GtkSnapshot *snapshot)
@@ -257,15 +291,13 @@ static void snapshot (GtkWidget *widget, GtkSnapshot *snapshot)
   append_layer (self, snapshot, &self->ground, inner_width, inner_height, draw_ground);
   if (shown_trace (self) != NULL)
     append_layer (self, snapshot, &self->run, inner_width, inner_height, draw_run);
-  cairo_t *cr = gtk_snapshot_append_cairo (snapshot, &inner);
-  draw_over (self, cr);
-  cairo_destroy (cr);
+  append_record (self, snapshot, draw_robot);
+  append_record (self, snapshot, draw_ghost);
+  append_record (self, snapshot, draw_cursor);
   gtk_snapshot_pop (snapshot);
   gtk_snapshot_restore (snapshot);
-
-  cr = gtk_snapshot_append_cairo (snapshot, &GRAPHENE_RECT_INIT (0, 0, (float)width, (float)height));
-  kh_canvas_draw_ruler_pointers (self, cr);
-  cairo_destroy (cr);
+  append_record (self, snapshot, kh_canvas_draw_ruler_top_pointer);
+  append_record (self, snapshot, kh_canvas_draw_ruler_left_pointer);
   gtk_widget_snapshot_child (widget, self->cursor, snapshot);
 }
 
@@ -332,14 +364,14 @@ static void plan_changed_cb (KhCanvas *self)
 
 static void review_changed_cb (KhCanvas *self)
 {
-  g_clear_object (&self->ground.texture);
-  g_clear_object (&self->run.texture);
+  g_clear_pointer (&self->ground, gsk_render_node_unref);
+  g_clear_pointer (&self->run, gsk_render_node_unref);
   gtk_widget_queue_draw (GTK_WIDGET (self));
 }
 
 static void player_changed_cb (KhCanvas *self)
 {
-  g_clear_object (&self->run.texture);
+  g_clear_pointer (&self->run, gsk_render_node_unref);
   gtk_widget_queue_draw (GTK_WIDGET (self));
 }
 
@@ -424,9 +456,9 @@ static void dispose (GObject *object)
   if (self->session != NULL)
     g_signal_handlers_disconnect_by_data (self->session, self);
   g_clear_object (&self->session);
-  g_clear_object (&self->ground.texture);
-  g_clear_object (&self->run.texture);
-  g_clear_object (&self->rulers.texture);
+  g_clear_pointer (&self->ground, gsk_render_node_unref);
+  g_clear_pointer (&self->run, gsk_render_node_unref);
+  g_clear_pointer (&self->rulers, gsk_render_node_unref);
   g_clear_pointer (&self->pointed_text, g_free);
   while ((child = gtk_widget_get_first_child (GTK_WIDGET (self))) != NULL)
     gtk_widget_unparent (child);

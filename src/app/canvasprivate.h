@@ -8,11 +8,6 @@
 #define KH_RULER_TOP 22
 #define KH_RULER_LEFT 24
 
-typedef struct
-{
-  GdkTexture *texture; /* NULL: to be drawn anew */
-} KhLayer;
-
 struct _KhCanvas
 {
   GtkWidget parent_instance;
@@ -25,7 +20,7 @@ struct _KhCanvas
   gboolean with_panels;
   KhLengthUnit unit;
 
-  KhLayer ground, run, rulers;
+  GskRenderNode *ground, *run, *rulers; /* layers; NULL: to be drawn anew */
 
   /* pointer, in the view's coordinates */
   gboolean pointer_in;
@@ -73,4 +68,5 @@ void kh_canvas_get_cursor_box (KhCanvas *self, KhBox *device);
 
 /* canvasrulers.c */
 void kh_canvas_draw_rulers (KhCanvas *self, cairo_t *cr, int width, int height);
-void kh_canvas_draw_ruler_pointers (KhCanvas *self, cairo_t *cr);
+void kh_canvas_draw_ruler_top_pointer (KhCanvas *self, cairo_t *cr);
+void kh_canvas_draw_ruler_left_pointer (KhCanvas *self, cairo_t *cr);

@@ -168,16 +168,25 @@ void kh_canvas_draw_rulers (KhCanvas *self, cairo_t *cr, int width, int height)
   pen_clear (&pen);
 }
 
-void kh_canvas_draw_ruler_pointers (KhCanvas *self, cairo_t *cr)
+void kh_canvas_draw_ruler_top_pointer (KhCanvas *self, cairo_t *cr)
 {
   if (!self->pointer_in || self->pointer_x < 0 || self->pointer_y < 0)
     return;
-  double x = KH_RULER_LEFT + self->pointer_x, y = KH_RULER_TOP + self->pointer_y;
+  double x = KH_RULER_LEFT + self->pointer_x;
   kh_palette_set_source (cr, kh_scheme_get (), KH_INK_SIGN, 1);
   cairo_move_to (cr, x - 5, KH_RULER_TOP - 7);
   cairo_line_to (cr, x + 5, KH_RULER_TOP - 7);
   cairo_line_to (cr, x, KH_RULER_TOP);
   cairo_close_path (cr);
+  cairo_fill (cr);
+}
+
+void kh_canvas_draw_ruler_left_pointer (KhCanvas *self, cairo_t *cr)
+{
+  if (!self->pointer_in || self->pointer_x < 0 || self->pointer_y < 0)
+    return;
+  double y = KH_RULER_TOP + self->pointer_y;
+  kh_palette_set_source (cr, kh_scheme_get (), KH_INK_SIGN, 1);
   cairo_move_to (cr, KH_RULER_LEFT - 7, y - 5);
   cairo_line_to (cr, KH_RULER_LEFT - 7, y + 5);
   cairo_line_to (cr, KH_RULER_LEFT, y);

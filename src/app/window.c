@@ -175,10 +175,7 @@ void kh_window_set_session_take (KhWindow *self, KhSession *session)
 
 KhSession *kh_window_get_session (KhWindow *self) { return self->session; }
 
-GtkWidget *kh_window_get_canvas (KhWindow *self)
-{
-  return self->canvas;
-}
+GtkWidget *kh_window_get_canvas (KhWindow *self) { return self->canvas; }
 
 gboolean kh_window_is_untouched (KhWindow *self)
 {

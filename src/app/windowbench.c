@@ -101,6 +101,7 @@ void kh_window_init_bench (KhWindow *self)
           gtk_box_append (GTK_BOX (box), self->count_badge);
         }
       gtk_button_set_child (GTK_BUTTON (button), box);
+      gtk_widget_set_hexpand (button, TRUE);
       gtk_actionable_set_action_name (GTK_ACTIONABLE (button), "win.bench");
       gtk_actionable_set_action_target (GTK_ACTIONABLE (button), "s", pages[i].name);
       gtk_box_append (GTK_BOX (self->bench_switcher), button);
