@@ -18,7 +18,7 @@ enum
 };
 static guint signals[N_SIGNALS];
 
-#define MARGIN 20      /* px round the plan when all of it is shown */
+#define MARGIN 20       /* px round the plan when all of it is shown */
 #define MARGIN_WEST 88  /* px: words of openings */
 #define MARGIN_EAST 140 /* px: words of openings, key of the trail */
 
@@ -162,7 +162,7 @@ static GskRenderNode *render (KhCanvas *self, int width, int height, DrawFunc dr
   cairo_t *cr = cairo_create (surface);
   draw (self, cr, width, height);
   cairo_destroy (cr);
-  GskRenderNode *node = gsk_cairo_node_new (&GRAPHENE_RECT_INIT (0, 0, (float) width, (float) height));
+  GskRenderNode *node = gsk_cairo_node_new (&GRAPHENE_RECT_INIT (0, 0, (float)width, (float)height));
   cr = gsk_cairo_node_get_draw_context (node);
   cairo_set_source_surface (cr, surface, 0, 0);
   cairo_pattern_set_filter (cairo_get_source (cr), CAIRO_FILTER_NEAREST);
