@@ -2,6 +2,7 @@
 #include "app/cutlistview.h"
 #include "app/bench.h"
 #include "app/settings.h"
+#include "app/tip.h"
 #include <glib/gi18n-lib.h>
 
 /* ---- one row ---- */
@@ -73,7 +74,7 @@ static void bind_cb (GtkSignalListItemFactory *factory, GtkListItem *cell, gpoin
                           : GPOINTER_TO_INT (column) == COLUMN_COUNT ? g_strdup_printf ("%d", item->count)
                                                                      : g_strdup (item->labels);
   gtk_label_set_text (GTK_LABEL (label), text);
-  gtk_widget_set_tooltip_text (label, GPOINTER_TO_INT (column) == COLUMN_LABELS ? item->labels : NULL);
+  kh_tip_set (label, GPOINTER_TO_INT (column) == COLUMN_LABELS ? item->labels : NULL);
 }
 
 static int compare_items (gconstpointer a, gconstpointer b, gpointer column)

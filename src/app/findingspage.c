@@ -1,6 +1,7 @@
 /* SPDX-License-Identifier: MIT */
 #include "app/findingspage.h"
 #include "app/bench.h"
+#include "app/tip.h"
 #include <glib/gi18n-lib.h>
 #include <math.h>
 
@@ -72,7 +73,7 @@ static GtkWidget *badge_new (const KhFinding *finding)
   gtk_drawing_area_set_content_height (GTK_DRAWING_AREA (area), 24);
   gtk_drawing_area_set_draw_func (GTK_DRAWING_AREA (area), draw_badge_cb, badge, g_free);
   gtk_widget_set_valign (area, GTK_ALIGN_START);
-  gtk_widget_set_tooltip_text (area, _ (severity_words[finding->severity]));
+  kh_tip_set (area, _ (severity_words[finding->severity]));
   return area;
 }
 

@@ -4,6 +4,7 @@
 #include "app/player.h"
 #include "app/runwords.h"
 #include "app/scheme.h"
+#include "app/tip.h"
 #include <glib/gi18n-lib.h>
 #include <math.h>
 
@@ -60,7 +61,7 @@ static void show_moment (GtkWidget *widget)
                             playing ? "media-playback-pause-symbolic" : "media-playback-start-symbolic");
   gtk_accessible_update_property (GTK_ACCESSIBLE (strip->play), GTK_ACCESSIBLE_PROPERTY_LABEL,
                                   playing ? _ ("Pause") : _ ("Play"), -1);
-  gtk_widget_set_tooltip_text (strip->play, playing ? _ ("Pause") : _ ("Play"));
+  kh_tip_set (strip->play, playing ? _ ("Pause") : _ ("Play"));
   gtk_widget_queue_draw (strip->area);
   if (!trace)
     {

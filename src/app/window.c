@@ -3,6 +3,7 @@
 
 #include "app/settings.h"
 #include "app/timing.h"
+#include "app/tip.h"
 #include "app/words.h"
 #include <glib/gi18n-lib.h>
 
@@ -36,8 +37,8 @@ static void show_undo (KhWindow *self)
   g_autofree char *undo_text = undo != NULL ? g_strdup_printf (_ ("Undo: %s"), undo) : g_strdup ("");
   g_autofree char *redo_text = redo != NULL ? g_strdup_printf (_ ("Redo: %s"), redo) : g_strdup (_ ("Nothing to redo"));
   gtk_label_set_text (GTK_LABEL (self->undo_label), undo_text);
-  gtk_widget_set_tooltip_text (self->undo_button, undo != NULL ? undo_text : _ ("Nothing to undo"));
-  gtk_widget_set_tooltip_text (self->redo_button, redo_text);
+  kh_tip_set (self->undo_button, undo != NULL ? undo_text : _ ("Nothing to undo"));
+  kh_tip_set (self->redo_button, redo_text);
   gtk_accessible_update_property (GTK_ACCESSIBLE (self->undo_button), GTK_ACCESSIBLE_PROPERTY_LABEL,
                                   undo != NULL ? undo_text : _ ("Undo"), -1);
   gtk_accessible_update_property (GTK_ACCESSIBLE (self->redo_button), GTK_ACCESSIBLE_PROPERTY_LABEL,
@@ -104,7 +105,7 @@ static void show_verdict (KhWindow *self, const KhReview *review)
       bad = review->n_by_severity[KH_SEVERITY_BREAKS] + review->n_by_severity[KH_SEVERITY_HINDERS] > 0;
     }
   gtk_label_set_text (GTK_LABEL (self->verdict_label), words != NULL ? words : "");
-  gtk_widget_set_tooltip_text (self->verdict_label, words);
+  kh_tip_set (self->verdict_label, words);
   gtk_image_set_from_icon_name (GTK_IMAGE (self->verdict_image), bad ? "kh-care-symbolic" : "kh-sound-symbolic");
   if (bad)
     gtk_widget_add_css_class (self->status_bar, "kh-care");
