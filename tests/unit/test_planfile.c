@@ -35,7 +35,7 @@ static const Case cases[] = {
   { HEAD WALLS ", \"title\": \"a\", \"title\": \"b\"}", "x: title: this member stands twice; keep one of them" },
   { HEAD WALLS ", \"robot\": {\"drive\": {\"track_mm\": 80, \"track_mm\": 80}}}", "x: robot.drive.track_mm: this member stands twice; keep one of them" },
   { HEAD "\"walls\": {\"thickness_mm\": 90, \"height_mm\": 50, \"runs\": []}}",
-    "x: walls.thickness_mm: here stands {\"thickness_mm\": 90, \"height_mm\": 50, \"runs\": […; the walls must be thinner than half the pitch, 90 mm" },
+    "x: walls.thickness_mm: here stands {\"thickness_mm\": 90, \"height_mm\": 50, \"runs\": []…; the walls must be thinner than half the pitch, 90 mm" },
   { HEAD "\"walls\": {\"thickness_mm\": 12, \"height_mm\": 50, \"runs\": [[0, 0, 1, 1]]}}",
     "x: walls.runs[0]: here stands [0, 0, 1, 1]; it does not lie on a lattice line; give two points with the same column or the same row" },
   { HEAD "\"walls\": {\"thickness_mm\": 12, \"height_mm\": 50, \"runs\": [[0, 0, 2, 0], [1, 1, 1, 1]]}}",
