@@ -3,7 +3,7 @@
 #include "files/answers.h"
 #include "files/tables.h"
 #include "robot/run.h"
-#include <errno.h>
+#include <inttypes.h>
 #include <glib/gi18n-lib.h>
 #include <string.h>
 
@@ -41,7 +41,7 @@ static char *dup_words (const KhPlan *plan, const KhTrace *trace)
   if (trace->exact)
     g_string_append_printf (text, "%s\n", _ ("No errors drawn."));
   else
-    g_string_append_printf (text, _ ("Errors drawn: seed %" G_GUINT64_FORMAT ", trial %" G_GUINT64_FORMAT ".\n"),
+    g_string_append_printf (text, _ ("Errors drawn: seed %" PRIu64 ", trial %" PRIu64 ".\n"),
                             trace->seed, trace->trial);
   g_string_append_printf (text, "%s", _ ("Cells:"));
   for (guint i = 0; i < trace->cells->len; i++)

@@ -57,7 +57,7 @@ static gboolean is_list (KhReader *reader, KhNode node, gsize most)
 {
   if (kh_node_is_array (node) && kh_node_get_length (node) <= most)
     return TRUE;
-  kh_reader_fault (reader, node, _ ("give a list of at most %" G_GSIZE_FORMAT), most);
+  kh_reader_fault (reader, node, _ ("give a list of at most %zu"), most);
   return FALSE;
 }
 

@@ -263,7 +263,7 @@ gboolean kh_scan_json (const char *bytes, gsize n, const KhScanLimits *limits, c
   g_assert (limits->most_depth <= MOST_NESTED);
   if (n > limits->most_bytes)
     {
-      *fault = g_strdup_printf (_ ("the file is larger than the %" G_GSIZE_FORMAT " MiB that are read"),
+      *fault = g_strdup_printf (_ ("the file is larger than the %zu MiB that are read"),
                                 limits->most_bytes >> 20);
       return FALSE;
     }

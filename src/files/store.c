@@ -86,7 +86,7 @@ gboolean kh_store_load (const char *path, gsize most_bytes, char **bytes, gsize 
   if (all->len > most_bytes)
     {
       g_autofree char *size
-          = g_strdup_printf (_ ("the file is larger than the %" G_GSIZE_FORMAT " MiB that are read"), most_bytes >> 20);
+          = g_strdup_printf (_ ("the file is larger than the %zu MiB that are read"), most_bytes >> 20);
       return fail (error, KH_STORE_ERROR_TOO_LARGE, called, size, _ ("is it the right file?"));
     }
   *n = all->len;
