@@ -1,6 +1,7 @@
 /* SPDX-License-Identifier: MIT */
 /* What an edit costs: the layout part of the review, at three sizes; then one
  * run, one cut list and one saw plan of the classic maze.  Prints medians and the growth. */
+#include "base/units.h"
 #include "files/planfile.h"
 #include "plan/history.h"
 #include "review/review.h"
