@@ -8,7 +8,8 @@
 int main (int argc, char **argv)
 {
   setlocale (LC_ALL, "");
-  bindtextdomain (GETTEXT_PACKAGE, KH_LOCALE_DIR);
+  const char *catalogues = g_getenv ("KERFHAND_LOCALE_DIR"); /* a run out of the build folder */
+  bindtextdomain (GETTEXT_PACKAGE, catalogues ? catalogues : KH_LOCALE_DIR);
   bind_textdomain_codeset (GETTEXT_PACKAGE, "UTF-8");
   textdomain (GETTEXT_PACKAGE);
   g_autoptr (KhApplication) application = kh_application_new ();
