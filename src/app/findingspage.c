@@ -72,6 +72,7 @@ static GtkWidget *badge_new (const KhFinding *finding)
   gtk_drawing_area_set_content_width (GTK_DRAWING_AREA (area), 26);
   gtk_drawing_area_set_content_height (GTK_DRAWING_AREA (area), 24);
   gtk_drawing_area_set_draw_func (GTK_DRAWING_AREA (area), draw_badge_cb, badge, g_free);
+  g_object_set_data (G_OBJECT (area), "kh-drawn", badge);
   gtk_widget_set_valign (area, GTK_ALIGN_START);
   kh_tip_set (area, _ (severity_words[finding->severity]));
   return area;
@@ -143,21 +144,33 @@ static void reason_cb (GtkEntry *entry, Place *place)
 
 static void activate_entry_cb (GtkWidget *entry) { g_signal_emit_by_name (entry, "activate"); }
 
-static GtkWidget *set_aside_button_new (KhSession *session, const KhFinding *finding)
+/* Made when it is opened: a popover is a window of its own, too dear for each card. */
+static void make_reason_popover (GtkMenuButton *button, gpointer data)
 {
-  GtkWidget *button = gtk_menu_button_new (), *popover = gtk_popover_new (),
-            *box = gtk_box_new (GTK_ORIENTATION_VERTICAL, 6);
+  const Place *place = data;
+  GtkWidget *popover = gtk_popover_new (), *box = gtk_box_new (GTK_ORIENTATION_VERTICAL, 6);
   GtkWidget *entry = gtk_entry_new (), *done = gtk_button_new_with_mnemonic (_ ("_Set aside"));
+  Place *own = g_new (Place, 1);
+  *own = (Place){ place->session, g_strdup (place->code), { place->at[0], place->at[1] } };
   gtk_entry_set_placeholder_text (GTK_ENTRY (entry), _ ("meant so"));
   gtk_accessible_update_property (GTK_ACCESSIBLE (entry), GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Reason"), -1);
   gtk_box_append (GTK_BOX (box), words_new (_ ("Why it is sound as it is; kept in the plan:"), "kh-second"));
   gtk_box_append (GTK_BOX (box), entry);
   gtk_box_append (GTK_BOX (box), done);
   gtk_popover_set_child (GTK_POPOVER (popover), box);
-  gtk_menu_button_set_popover (GTK_MENU_BUTTON (button), popover);
-  gtk_menu_button_set_label (GTK_MENU_BUTTON (button), _ ("Set aside…"));
-  g_signal_connect_data (entry, "activate", G_CALLBACK (reason_cb), place_new (session, finding), place_free, 0);
+  g_signal_connect_data (entry, "activate", G_CALLBACK (reason_cb), own, place_free, 0);
   g_signal_connect_swapped (done, "clicked", G_CALLBACK (activate_entry_cb), entry);
+  gtk_menu_button_set_popover (button, popover);
+}
+
+static void place_destroy (gpointer place) { place_free (place, NULL); }
+
+static GtkWidget *set_aside_button_new (KhSession *session, const KhFinding *finding)
+{
+  GtkWidget *button = gtk_menu_button_new ();
+  gtk_menu_button_set_label (GTK_MENU_BUTTON (button), _ ("Set aside…"));
+  gtk_menu_button_set_create_popup_func (GTK_MENU_BUTTON (button), make_reason_popover, place_new (session, finding),
+                                         place_destroy);
   return button;
 }
 
@@ -177,13 +190,37 @@ static GtkWidget *show_button_new (int index)
   return show;
 }
 
+/* A card says this; its number may change beneath it. */
+static char *dup_card_key (const KhFinding *finding)
+{
+  return g_strdup_printf ("%s|%s|%s|%d|%g|%g", finding->code, finding->wrong, finding->effect, (int)finding->severity,
+                          finding->at[0], finding->at[1]);
+}
+
+static void number_card (GtkWidget *card, const KhFinding *finding, int index)
+{
+  GtkWidget *badge = g_object_get_data (G_OBJECT (card), "kh-badge"),
+            *show = g_object_get_data (G_OBJECT (card), "kh-show");
+  Badge *drawn = g_object_get_data (G_OBJECT (badge), "kh-drawn");
+  g_autofree char *name = g_strdup_printf ("%d, %s. %s %s", finding->number, _ (severity_words[finding->severity]),
+                                           finding->wrong, finding->effect);
+  g_object_set_data (G_OBJECT (card), "kh-index", GINT_TO_POINTER (index));
+  gtk_actionable_set_action_target (GTK_ACTIONABLE (show), "i", index);
+  gtk_accessible_update_property (GTK_ACCESSIBLE (card), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
+  drawn->number = finding->number;
+  gtk_widget_queue_draw (badge);
+}
+
 static GtkWidget *card_new (Page *page, const KhFinding *finding, int index)
 {
   GtkWidget *card = gtk_box_new (GTK_ORIENTATION_VERTICAL, 6), *head = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 8);
   GtkWidget *texts = gtk_box_new (GTK_ORIENTATION_VERTICAL, 3), *buttons = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 6);
   gtk_widget_add_css_class (card, "kh-card");
-  g_object_set_data (G_OBJECT (card), "kh-index", GINT_TO_POINTER (index));
-  gtk_box_append (GTK_BOX (head), badge_new (finding));
+  GtkWidget *badge = badge_new (finding), *show = show_button_new (index);
+  g_object_set_data (G_OBJECT (card), "kh-badge", badge);
+  g_object_set_data (G_OBJECT (card), "kh-show", show);
+  g_object_set_data_full (G_OBJECT (card), "kh-key", dup_card_key (finding), g_free);
+  gtk_box_append (GTK_BOX (head), badge);
   gtk_widget_set_hexpand (texts, TRUE);
   gtk_box_append (GTK_BOX (texts), words_new (finding->wrong, "kh-heading"));
   gtk_box_append (GTK_BOX (texts), words_new (_ (severity_words[finding->severity]), "kh-second"));
@@ -192,15 +229,13 @@ static GtkWidget *card_new (Page *page, const KhFinding *finding, int index)
   gtk_box_append (GTK_BOX (head), texts);
   gtk_box_append (GTK_BOX (card), head);
   gtk_widget_set_margin_start (buttons, 34);
-  gtk_box_append (GTK_BOX (buttons), show_button_new (index));
+  gtk_box_append (GTK_BOX (buttons), show);
   gtk_box_append (GTK_BOX (buttons), set_aside_button_new (page->session, finding));
   gtk_box_append (GTK_BOX (card), buttons);
   GtkEventController *focus = gtk_event_controller_focus_new ();
   g_signal_connect (focus, "enter", G_CALLBACK (chosen_cb), page);
   gtk_widget_add_controller (card, focus);
-  g_autofree char *name = g_strdup_printf ("%d, %s. %s %s", finding->number, _ (severity_words[finding->severity]),
-                                           finding->wrong, finding->effect);
-  gtk_accessible_update_property (GTK_ACCESSIBLE (card), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
+  number_card (card, finding, index);
   return card;
 }
 
@@ -264,6 +299,45 @@ static char *dup_key (const KhReview *review)
   return g_string_free (key, FALSE);
 }
 
+/* The card of this finding among those from 'from' on; NULL: none yet. */
+static GtkWidget *find_card (GtkWidget *from, const KhFinding *finding)
+{
+  g_autofree char *key = dup_card_key (finding);
+  for (GtkWidget *card = from; card != NULL; card = gtk_widget_get_next_sibling (card))
+    if (g_strcmp0 (g_object_get_data (G_OBJECT (card), "kh-key"), key) == 0)
+      return card;
+  return NULL;
+}
+
+/* Cards whose words stay are kept, so that the focus stays and only what is new
+ * has its text laid out. */
+static void fill_cards (Page *page, const KhReview *review)
+{
+  GtkWidget *last = NULL, *card;
+  for (guint i = 0; i < review->findings->len; i++)
+    {
+      const KhFinding *finding = g_ptr_array_index (review->findings, i);
+      GtkWidget *next = last ? gtk_widget_get_next_sibling (last) : gtk_widget_get_first_child (page->cards);
+      if (finding->reason)
+        continue;
+      card = find_card (next, finding);
+      if (card == NULL)
+        {
+          card = card_new (page, finding, (int)i);
+          gtk_box_insert_child_after (GTK_BOX (page->cards), card, last);
+        }
+      else
+        {
+          if (card != next)
+            gtk_box_reorder_child_after (GTK_BOX (page->cards), card, last);
+          number_card (card, finding, (int)i);
+        }
+      last = card;
+    }
+  while ((card = last ? gtk_widget_get_next_sibling (last) : gtk_widget_get_first_child (page->cards)) != NULL)
+    gtk_box_remove (GTK_BOX (page->cards), card);
+}
+
 static void fill (GtkWidget *widget)
 {
   Page *page = g_object_get_data (G_OBJECT (widget), "kh-page");
@@ -277,17 +351,12 @@ static void fill (GtkWidget *widget)
     }
   g_object_set_data_full (G_OBJECT (widget), "kh-key", key, g_free);
   gtk_label_set_text (GTK_LABEL (page->count), count);
-  clear (page->cards);
   clear (page->aside);
   clear (page->sound);
+  fill_cards (page, review);
   for (guint i = 0; i < review->findings->len; i++)
-    {
-      const KhFinding *finding = g_ptr_array_index (review->findings, i);
-      if (finding->reason)
-        gtk_box_append (GTK_BOX (page->aside), aside_new (page, finding));
-      else
-        gtk_box_append (GTK_BOX (page->cards), card_new (page, finding, (int)i));
-    }
+    if (((const KhFinding *)g_ptr_array_index (review->findings, i))->reason)
+      gtk_box_append (GTK_BOX (page->aside), aside_new (page, g_ptr_array_index (review->findings, i)));
   for (guint i = 0; i < review->sound->len; i++)
     gtk_box_append (GTK_BOX (page->sound), sound_new (g_ptr_array_index (review->sound, i)));
   gtk_widget_set_visible (page->aside_heading, review->n_set_aside > 0);
