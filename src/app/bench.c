@@ -35,6 +35,34 @@ GtkWidget *kh_bench_heading_new (const char *text)
 
 GtkWidget *kh_bench_note_new (const char *text) { return label_new (text, "kh-second"); }
 
+/* The width of a wrapping label is the column's, never its words': GTK 4.8 finds
+ * a label's own least width by laying the words out some twenty times. */
+static void measure_words_cb (GtkWidget *frame, GtkOrientation orientation, int for_size, int *least, int *natural,
+                              int *least_baseline, int *natural_baseline)
+{
+  if (orientation == GTK_ORIENTATION_HORIZONTAL)
+    *least = *natural = 60;
+  else
+    gtk_widget_measure (gtk_widget_get_first_child (frame), orientation, MAX (for_size, 60), least, natural,
+                        least_baseline, natural_baseline);
+}
+
+static void allocate_words_cb (GtkWidget *frame, int width, int height, int baseline)
+{
+  gtk_widget_allocate (gtk_widget_get_first_child (frame), width, height, baseline, NULL);
+}
+
+static GtkSizeRequestMode get_mode_cb (GtkWidget *frame) { return GTK_SIZE_REQUEST_HEIGHT_FOR_WIDTH; }
+
+GtkWidget *kh_bench_words_new (const char *text, const char *css)
+{
+  GtkWidget *frame = gtk_box_new (GTK_ORIENTATION_VERTICAL, 0);
+  gtk_box_append (GTK_BOX (frame), label_new (text, css));
+  gtk_widget_set_hexpand (frame, TRUE);
+  gtk_widget_set_layout_manager (frame, gtk_custom_layout_new (get_mode_cb, measure_words_cb, allocate_words_cb));
+  return frame;
+}
+
 void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped)
 {
   g_signal_connect_object (session, signal, callback_swapped, widget, G_CONNECT_SWAPPED);

@@ -8,6 +8,7 @@
 /* A page: one column in a scrolled window. '*column' is where rows go. */
 GtkWidget *kh_bench_page_new (GtkWidget **column);
 GtkWidget *kh_bench_heading_new (const char *text);
+GtkWidget *kh_bench_words_new (const char *text, const char *css); /* words that wrap, cheap to lay out; hexpands */
 GtkWidget *kh_bench_note_new (const char *text);            /* second-rank words that wrap */
 /* "Label  [widget]" in one row; the label is the widget's mnemonic and name. */
 GtkWidget *kh_bench_row_new (const char *label, GtkWidget *widget);

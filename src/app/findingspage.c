@@ -78,16 +78,6 @@ static GtkWidget *badge_new (const KhFinding *finding)
   return area;
 }
 
-static GtkWidget *words_new (const char *text, const char *css)
-{
-  GtkWidget *label = gtk_label_new (text);
-  gtk_label_set_xalign (GTK_LABEL (label), 0);
-  gtk_label_set_wrap (GTK_LABEL (label), TRUE);
-  gtk_label_set_wrap_mode (GTK_LABEL (label), PANGO_WRAP_WORD_CHAR);
-  gtk_widget_add_css_class (label, css);
-  return label;
-}
-
 /* ---- set aside, bring back ---- */
 
 typedef struct
@@ -154,7 +144,7 @@ static void make_reason_popover (GtkMenuButton *button, gpointer data)
   *own = (Place){ place->session, g_strdup (place->code), { place->at[0], place->at[1] } };
   gtk_entry_set_placeholder_text (GTK_ENTRY (entry), _ ("meant so"));
   gtk_accessible_update_property (GTK_ACCESSIBLE (entry), GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Reason"), -1);
-  gtk_box_append (GTK_BOX (box), words_new (_ ("Why it is sound as it is; kept in the plan:"), "kh-second"));
+  gtk_box_append (GTK_BOX (box), kh_bench_words_new (_ ("Why it is sound as it is; kept in the plan:"), "kh-second"));
   gtk_box_append (GTK_BOX (box), entry);
   gtk_box_append (GTK_BOX (box), done);
   gtk_popover_set_child (GTK_POPOVER (popover), box);
@@ -222,10 +212,10 @@ static GtkWidget *card_new (Page *page, const KhFinding *finding, int index)
   g_object_set_data_full (G_OBJECT (card), "kh-key", dup_card_key (finding), g_free);
   gtk_box_append (GTK_BOX (head), badge);
   gtk_widget_set_hexpand (texts, TRUE);
-  gtk_box_append (GTK_BOX (texts), words_new (finding->wrong, "kh-heading"));
-  gtk_box_append (GTK_BOX (texts), words_new (_ (severity_words[finding->severity]), "kh-second"));
+  gtk_box_append (GTK_BOX (texts), kh_bench_words_new (finding->wrong, "kh-heading"));
+  gtk_box_append (GTK_BOX (texts), kh_bench_words_new (_ (severity_words[finding->severity]), "kh-second"));
   if (*finding->effect)
-    gtk_box_append (GTK_BOX (texts), words_new (finding->effect, "kh-running"));
+    gtk_box_append (GTK_BOX (texts), kh_bench_words_new (finding->effect, "kh-running"));
   gtk_box_append (GTK_BOX (head), texts);
   gtk_box_append (GTK_BOX (card), head);
   gtk_widget_set_margin_start (buttons, 34);
@@ -244,8 +234,8 @@ static GtkWidget *aside_new (Page *page, const KhFinding *finding)
   GtkWidget *card = gtk_box_new (GTK_ORIENTATION_VERTICAL, 3), *back = gtk_button_new_with_label (_ ("Bring back"));
   gtk_widget_add_css_class (card, "kh-card");
   gtk_widget_set_halign (back, GTK_ALIGN_START);
-  gtk_box_append (GTK_BOX (card), words_new (finding->wrong, "kh-running"));
-  gtk_box_append (GTK_BOX (card), words_new (finding->reason, "kh-second"));
+  gtk_box_append (GTK_BOX (card), kh_bench_words_new (finding->wrong, "kh-running"));
+  gtk_box_append (GTK_BOX (card), kh_bench_words_new (finding->reason, "kh-second"));
   gtk_box_append (GTK_BOX (card), back);
   g_signal_connect_data (back, "clicked", G_CALLBACK (bring_back_cb), place_new (page->session, finding), place_free,
                          0);
@@ -258,7 +248,7 @@ static GtkWidget *sound_new (const char *text)
   gtk_widget_add_css_class (tick, "kh-answer");
   gtk_widget_set_valign (tick, GTK_ALIGN_START);
   gtk_box_append (GTK_BOX (row), tick);
-  gtk_box_append (GTK_BOX (row), words_new (text, "kh-running"));
+  gtk_box_append (GTK_BOX (row), kh_bench_words_new (text, "kh-running"));
   return row;
 }
 
@@ -386,7 +376,7 @@ GtkWidget *kh_findings_page_new (KhSession *session)
   GtkWidget *column, *widget = kh_bench_page_new (&column);
   GtkWidget *head = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 6), *next = kh_bench_note_new (_ ("Next finding F8"));
   page->session = g_object_ref (session);
-  page->count = words_new ("", "kh-heading");
+  page->count = kh_bench_heading_new ("");
   page->cards = gtk_box_new (GTK_ORIENTATION_VERTICAL, 10);
   page->aside = gtk_box_new (GTK_ORIENTATION_VERTICAL, 6);
   page->sound = gtk_box_new (GTK_ORIENTATION_VERTICAL, 4);
