@@ -355,11 +355,31 @@ void kh_canvas_wish_tool (KhCanvas *self, const char *name) { g_signal_emit (sel
 
 /* ---- model ---- */
 
+static void remember_lattice (KhCanvas *self)
+{
+  const KhLattice *now = &kh_session_get_plan (self->session)->lattice;
+  self->shown_columns = now->columns;
+  self->shown_rows = now->rows;
+  self->shown_pitch_nm = now->pitch_nm;
+}
+
+/* Rulers and view stay where only walls, marks or numbers changed. */
 static void plan_changed_cb (KhCanvas *self)
 {
+  const KhLattice *now = &kh_session_get_plan (self->session)->lattice;
+  gboolean same
+      = now->columns == self->shown_columns && now->rows == self->shown_rows && now->pitch_nm == self->shown_pitch_nm;
   kh_canvas_clamp_cursor (self);
   kh_canvas_name_cursor (self);
-  kh_canvas_drop_layers (self);
+  if (!same)
+    {
+      remember_lattice (self);
+      kh_canvas_fit (self);
+      return;
+    }
+  g_clear_pointer (&self->ground, gsk_render_node_unref);
+  g_clear_pointer (&self->run, gsk_render_node_unref);
+  gtk_widget_queue_draw (GTK_WIDGET (self));
 }
 
 static void review_changed_cb (KhCanvas *self)
@@ -392,6 +412,7 @@ void kh_canvas_set_session (KhCanvas *self, KhSession *session)
   self->point = (KhPoint){ 0, 0 };
   self->edge = (KhEdge){ KH_AXIS_X, 0, 0 };
   self->cell = (KhCell){ 0, 0 };
+  remember_lattice (self);
   kh_canvas_name_cursor (self);
   kh_canvas_fit (self);
 }

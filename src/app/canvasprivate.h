@@ -14,6 +14,8 @@ struct _KhCanvas
 
   KhSession *session;
   KhView view;      /* of the part right of and below the rulers */
+  int shown_columns, shown_rows; /* what the rulers were drawn for */
+  int64_t shown_pitch_nm;
   gboolean fitted;  /* keeps showing all when the size changes */
   KhToolId tool;
   gboolean take_away;

@@ -341,6 +341,7 @@ static void fill (GtkWidget *widget)
     }
   g_object_set_data_full (G_OBJECT (widget), "kh-key", key, g_free);
   gtk_label_set_text (GTK_LABEL (page->count), count);
+  kh_tip_set (page->count, count);
   clear (page->aside);
   clear (page->sound);
   fill_cards (page, review);
@@ -377,6 +378,8 @@ GtkWidget *kh_findings_page_new (KhSession *session)
   GtkWidget *head = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 6), *next = kh_bench_note_new (_ ("Next finding F8"));
   page->session = g_object_ref (session);
   page->count = kh_bench_heading_new ("");
+  gtk_label_set_wrap (GTK_LABEL (page->count), FALSE); /* it changes with each edit: cheap to lay out */
+  gtk_label_set_ellipsize (GTK_LABEL (page->count), PANGO_ELLIPSIZE_END);
   page->cards = gtk_box_new (GTK_ORIENTATION_VERTICAL, 10);
   page->aside = gtk_box_new (GTK_ORIENTATION_VERTICAL, 6);
   page->sound = gtk_box_new (GTK_ORIENTATION_VERTICAL, 4);
