@@ -26,9 +26,9 @@ static guint signals[N_SIGNALS];
 
 static void forget_layers (KhCanvas *self)
 {
-  g_clear_pointer (&self->ground, gsk_render_node_unref);
-  g_clear_pointer (&self->run, gsk_render_node_unref);
-  g_clear_pointer (&self->rulers, gsk_render_node_unref);
+  kh_layer_spoil (&self->ground);
+  kh_layer_spoil (&self->run);
+  kh_layer_spoil (&self->rulers);
 }
 
 void kh_canvas_drop_layers (KhCanvas *self)
@@ -148,32 +148,9 @@ static void init_picture (KhCanvas *self, KhPlanPicture *picture)
   picture->text_size = 11;
 }
 
-typedef void (*DrawFunc) (KhCanvas *self, cairo_t *cr, int width, int height);
-
-/* Draws a layer into a picture at the screen's own resolution, kept as one
- * render node: the same node in the next frame costs nothing where nothing over
- * it changes.  (A GdkTexture would do, but GTK 4.8's software renderer converts
- * it pixel by pixel in every frame: 20 ms.) */
-static GskRenderNode *render (KhCanvas *self, int width, int height, DrawFunc draw)
+static void draw_ground (gpointer data, cairo_t *cr, int width, int height)
 {
-  int scale = gtk_widget_get_scale_factor (GTK_WIDGET (self));
-  cairo_surface_t *surface = cairo_image_surface_create (CAIRO_FORMAT_ARGB32, width * scale, height * scale);
-  cairo_surface_set_device_scale (surface, scale, scale);
-  cairo_t *cr = cairo_create (surface);
-  draw (self, cr, width, height);
-  cairo_destroy (cr);
-  GskRenderNode *node = gsk_cairo_node_new (&GRAPHENE_RECT_INIT (0, 0, (float)width, (float)height));
-  cr = gsk_cairo_node_get_draw_context (node);
-  cairo_set_source_surface (cr, surface, 0, 0);
-  cairo_pattern_set_filter (cairo_get_source (cr), CAIRO_FILTER_NEAREST);
-  cairo_paint (cr);
-  cairo_destroy (cr);
-  cairo_surface_destroy (surface);
-  return node;
-}
-
-static void draw_ground (KhCanvas *self, cairo_t *cr, int width, int height)
-{
+  KhCanvas *self = data;
   KhPlanPicture picture;
   init_picture (self, &picture);
   kh_palette_set_source (cr, picture.scheme, KH_INK_DESK, 1);
@@ -203,8 +180,9 @@ static void draw_key (KhCanvas *self, cairo_t *cr)
   kh_plan_picture_draw_key (&picture, cr, east.x + 14, self->view.height * 0.36, picture.hand);
 }
 
-static void draw_run (KhCanvas *self, cairo_t *cr, int width, int height)
+static void draw_run (gpointer data, cairo_t *cr, int width, int height)
 {
+  KhCanvas *self = data;
   KhPlanPicture picture;
   init_picture (self, &picture);
   kh_plan_picture_draw_run (&picture, cr, &self->view, kh_session_get_plan (self->session),
@@ -267,14 +245,6 @@ static void append_record (KhCanvas *self, GtkSnapshot *snapshot, void (*draw) (
   cairo_surface_destroy (record);
 }
 
-static void append_layer (KhCanvas *self, GtkSnapshot *snapshot, GskRenderNode **layer, int width, int height,
-                          DrawFunc draw)
-{
-  if (*layer == NULL)
-    *layer = render (self, width, height, draw);
-  gtk_snapshot_append_node (snapshot, *layer);
-}
-
 static void snapshot (GtkWidget *widget, GtkSnapshot *snapshot)
 {
   KhCanvas *self = KH_CANVAS (widget);
@@ -282,15 +252,17 @@ static void snapshot (GtkWidget *widget, GtkSnapshot *snapshot)
   int inner_width = width - KH_RULER_LEFT, inner_height = height - KH_RULER_TOP;
   if (self->session == NULL || inner_width < 1 || inner_height < 1)
     return;
+  int scale = gtk_widget_get_scale_factor (widget);
   graphene_rect_t inner = GRAPHENE_RECT_INIT (0, 0, (float)inner_width, (float)inner_height);
+  graphene_size_t whole = GRAPHENE_SIZE_INIT ((float)width, (float)height);
 
-  append_layer (self, snapshot, &self->rulers, width, height, kh_canvas_draw_rulers);
+  kh_layer_append (&self->rulers, snapshot, &whole, scale, kh_canvas_draw_rulers, self);
   gtk_snapshot_save (snapshot);
   gtk_snapshot_translate (snapshot, &GRAPHENE_POINT_INIT (KH_RULER_LEFT, KH_RULER_TOP));
   gtk_snapshot_push_clip (snapshot, &inner);
-  append_layer (self, snapshot, &self->ground, inner_width, inner_height, draw_ground);
+  kh_layer_append (&self->ground, snapshot, &inner.size, scale, draw_ground, self);
   if (shown_trace (self) != NULL)
-    append_layer (self, snapshot, &self->run, inner_width, inner_height, draw_run);
+    kh_layer_append (&self->run, snapshot, &inner.size, scale, draw_run, self);
   append_record (self, snapshot, draw_robot);
   append_record (self, snapshot, draw_ghost);
   append_record (self, snapshot, draw_cursor);
@@ -377,21 +349,21 @@ static void plan_changed_cb (KhCanvas *self)
       kh_canvas_fit (self);
       return;
     }
-  g_clear_pointer (&self->ground, gsk_render_node_unref);
-  g_clear_pointer (&self->run, gsk_render_node_unref);
+  kh_layer_spoil (&self->ground);
+  kh_layer_spoil (&self->run);
   gtk_widget_queue_draw (GTK_WIDGET (self));
 }
 
 static void review_changed_cb (KhCanvas *self)
 {
-  g_clear_pointer (&self->ground, gsk_render_node_unref);
-  g_clear_pointer (&self->run, gsk_render_node_unref);
+  kh_layer_spoil (&self->ground);
+  kh_layer_spoil (&self->run);
   gtk_widget_queue_draw (GTK_WIDGET (self));
 }
 
 static void player_changed_cb (KhCanvas *self)
 {
-  g_clear_pointer (&self->run, gsk_render_node_unref);
+  kh_layer_spoil (&self->run);
   gtk_widget_queue_draw (GTK_WIDGET (self));
 }
 
@@ -477,9 +449,9 @@ static void dispose (GObject *object)
   if (self->session != NULL)
     g_signal_handlers_disconnect_by_data (self->session, self);
   g_clear_object (&self->session);
-  g_clear_pointer (&self->ground, gsk_render_node_unref);
-  g_clear_pointer (&self->run, gsk_render_node_unref);
-  g_clear_pointer (&self->rulers, gsk_render_node_unref);
+  kh_layer_clear (&self->ground);
+  kh_layer_clear (&self->run);
+  kh_layer_clear (&self->rulers);
   g_clear_pointer (&self->pointed_text, g_free);
   while ((child = gtk_widget_get_first_child (GTK_WIDGET (self))) != NULL)
     gtk_widget_unparent (child);

@@ -1,6 +1,7 @@
 /* SPDX-License-Identifier: MIT */
 #pragma once
 #include "app/canvas.h"
+#include "app/layer.h"
 #include "draw/planpicture.h"
 
 /* What the canvas's files share. */
@@ -22,7 +23,7 @@ struct _KhCanvas
   gboolean with_panels;
   KhLengthUnit unit;
 
-  GskRenderNode *ground, *run, *rulers; /* layers; NULL: to be drawn anew */
+  KhLayer ground, run, rulers;
 
   /* pointer, in the view's coordinates */
   gboolean pointer_in;
@@ -69,6 +70,6 @@ void kh_canvas_draw_cursor (KhCanvas *self, cairo_t *cr);
 void kh_canvas_get_cursor_box (KhCanvas *self, KhBox *device);
 
 /* canvasrulers.c */
-void kh_canvas_draw_rulers (KhCanvas *self, cairo_t *cr, int width, int height);
+void kh_canvas_draw_rulers (gpointer canvas, cairo_t *cr, int width, int height);
 void kh_canvas_draw_ruler_top_pointer (KhCanvas *self, cairo_t *cr);
 void kh_canvas_draw_ruler_left_pointer (KhCanvas *self, cairo_t *cr);

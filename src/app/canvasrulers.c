@@ -135,8 +135,9 @@ static void set_chrome_source (KhCanvas *self, cairo_t *cr)
   gdk_cairo_set_source_rgba (cr, &colour);
 }
 
-void kh_canvas_draw_rulers (KhCanvas *self, cairo_t *cr, int width, int height)
+void kh_canvas_draw_rulers (gpointer canvas, cairo_t *cr, int width, int height)
 {
+  KhCanvas *self = canvas;
   Pen pen;
   set_chrome_source (self, cr);
   cairo_rectangle (cr, 0, 0, width, KH_RULER_TOP);
