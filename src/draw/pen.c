@@ -6,6 +6,17 @@
 static PangoLayout *layout_new (cairo_t *cr, double size, gboolean bold, const char *text)
 {
   PangoLayout *layout = pango_cairo_create_layout (cr);
+  /* On paper a unit is a millimetre: glyphs must not be moved to whole ones. */
+  if (cairo_surface_get_type (cairo_get_target (cr)) != CAIRO_SURFACE_TYPE_IMAGE)
+    {
+      PangoContext *context = pango_layout_get_context (layout);
+      cairo_font_options_t *options = cairo_font_options_create ();
+      cairo_font_options_set_hint_style (options, CAIRO_HINT_STYLE_NONE);
+      cairo_font_options_set_hint_metrics (options, CAIRO_HINT_METRICS_OFF);
+      pango_cairo_context_set_font_options (context, options);
+      pango_context_set_round_glyph_positions (context, FALSE);
+      cairo_font_options_destroy (options);
+    }
   PangoFontDescription *font = pango_font_description_new ();
   pango_font_description_set_family_static (font, "Sans");
   pango_font_description_set_absolute_size (font, size * PANGO_SCALE);

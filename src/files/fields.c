@@ -107,7 +107,7 @@ static void read_field (KhReader *reader, KhNode node, const KhField *field, gpo
     switch (field->kind)
       {
       case KH_FIELD_DOUBLE_OPEN:
-        *(double *)at = NAN;
+        *(double *)at = (double) NAN;
         return;
       case KH_FIELD_COUNT:
         *(int *)at = KH_COUNT_ANY;

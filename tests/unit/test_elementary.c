@@ -12,8 +12,8 @@
 static double ulps (double got, long double want)
 {
   int exponent;
-  (void) frexpl (want, &exponent);
-  return (double) (fabsl ((long double) got - want) / ldexpl (1.0L, exponent - DBL_MANT_DIG));
+  (void) frexpl ((long double) want, &exponent);
+  return (double) (fabsl ((long double) got - want) / ldexpl ((long double) 1.0L, exponent - DBL_MANT_DIG));
 }
 
 static void every_function_is_within_two_ulp (void **state)
@@ -24,13 +24,13 @@ static void every_function_is_within_two_ulp (void **state)
     {
       double unit = kh_random_unit (key, i, 0), angle = (unit - 0.5) * (i % 2 ? 12 : 2e5);
       double wide = kh_exp ((kh_random_unit (key, i, 1) - 0.5) * 80);
-      worst[0] = fmax (worst[0], ulps (kh_sin (angle), sinl (angle)));
-      worst[1] = fmax (worst[1], ulps (kh_cos (angle), cosl (angle)));
-      worst[2] = fmax (worst[2], ulps (kh_atan (i % 2 ? wide : -wide), atanl (i % 2 ? wide : -wide)));
-      worst[3] = fmax (worst[3], ulps (kh_exp ((unit - 0.5) * 1400), expl ((unit - 0.5) * 1400)));
-      worst[4] = fmax (worst[4], ulps (kh_log (wide), logl (wide)));
+      worst[0] = fmax (worst[0], ulps (kh_sin (angle), sinl ((long double) angle)));
+      worst[1] = fmax (worst[1], ulps (kh_cos (angle), cosl ((long double) angle)));
+      worst[2] = fmax (worst[2], ulps (kh_atan (i % 2 ? wide : -wide), atanl (i % 2 ? (long double) wide : (long double) -wide)));
+      worst[3] = fmax (worst[3], ulps (kh_exp ((unit - 0.5) * 1400), expl ((long double) (unit - 0.5) * 1400)));
+      worst[4] = fmax (worst[4], ulps (kh_log (wide), logl ((long double) wide)));
       double y = (kh_random_unit (key, i, 2) - 0.5), x = (kh_random_unit (key, i, 3) - 0.5);
-      worst[5] = fmax (worst[5], ulps (kh_atan2 (y, x), atan2l (y, x)));
+      worst[5] = fmax (worst[5], ulps (kh_atan2 (y, x), atan2l ((long double) y, (long double) x)));
     }
   for (int f = 0; f < 6; f++)
     if (!(worst[f] <= 2.0))
