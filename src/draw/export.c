@@ -83,7 +83,7 @@ static GBytes *export_svg (KhExportWhat what, const KhPlan *plan, const KhReview
 static GBytes *export_png (KhExportWhat what, const KhPlan *plan, const KhReview *review, int pixels, GError **error)
 {
   double width = kh_mm_from_nm (kh_plan_width_nm (plan)), depth = kh_mm_from_nm (kh_plan_depth_nm (plan));
-  double text = 11 * MAX (pixels / PNG_LOOK, 0.7), margin = 5.5 * text;
+  double text = 11 * MAX (pixels / PNG_LOOK, 0.7), margin = 7.5 * text;
   double scale = (pixels - 2 * margin) / MAX (width, depth);
   int w = (int)ceil (width * scale + 2 * margin), h = (int)ceil (depth * scale + 2 * margin);
   if (scale <= 0)

@@ -46,6 +46,7 @@ static void add_teeth (const KhGround *g, KhEdge edge)
 
 static void draw_islands (const KhGround *g)
 {
+  kh_ground_set_ink (g, KH_INK_ISLAND, 1);
   for (guint i = 0; i < g->review->findings->len; i++)
     {
       const KhFinding *finding = g_ptr_array_index (g->review->findings, i);
@@ -55,11 +56,12 @@ static void draw_islands (const KhGround *g)
         {
           KhEdge edge = g_array_index (finding->edges, KhEdge, k);
           if (kh_plan_has_wall (g->plan, edge) && kh_pen_sees (g->view, run_box (g, run_of_edge (edge))))
-            add_teeth (g, edge);
+            {
+              add_teeth (g, edge);
+              cairo_fill (g->cr);
+            }
         }
     }
-  kh_ground_set_ink (g, KH_INK_ISLAND, 1);
-  cairo_fill (g->cr);
 }
 
 static void draw_leaks (const KhGround *g)
@@ -132,8 +134,12 @@ static void draw_label (const KhGround *g, const KhPanel *panel, KhBox box, gboo
   kh_pen_measure (g->cr, size, lit, panel->label, &width, &height);
   if (width > (x ? box.x1 - box.x0 : box.y1 - box.y0) * g->view->scale || height * 1.6 > g->pitch * g->view->scale)
     return;
-  KhVec at = kh_view_to_device (g->view, (KhVec){ (box.x0 + box.x1) / 2, (box.y0 + box.y1) / 2 });
-  double off = (g->thickness * g->view->scale + height) / 2 + 1.5 * g->px;
+  /* Beside the middle of an edge, where no other wall meets; inside the plan on its south and west sides. */
+  double along = (panel->run.from + (panel->run.to - panel->run.from) / 2 + ((panel->run.to - panel->run.from) % 2 ? 0.5 : -0.5)) * g->pitch;
+  double line = panel->run.line * g->pitch, off = (g->thickness * g->view->scale + height) / 2 + 1.5 * g->px;
+  KhVec at = kh_view_to_device (g->view, x ? (KhVec){ along, line } : (KhVec){ line, along });
+  if (panel->run.line == 0)
+    off = -off;
   KhWords words = { x ? at.x : at.x - off, x ? at.y + off : at.y, size, lit, KH_ALIGN_MIDDLE, x ? 0 : -G_PI / 2, 0 };
   kh_ground_set_ink (g, lit ? KH_INK_SIGN_WORDS : KH_INK_TEXT_SECOND, 1);
   kh_pen_words (g->cr, &words, panel->label);

@@ -11,6 +11,8 @@ int LLVMFuzzerTestOneInput (const guint8 *data, size_t n)
   g_autoptr (GPtrArray) faults = NULL;
   g_autoptr (KhPlan) plan = kh_plan_file_parse ((const char *) data, n, "x", &faults);
   g_autoptr (KhSawOrder) order = kh_saw_order_parse ((const char *) data, n, "x", &faults);
+  if (order)
+    g_assert_true (kh_saw_order_check (order, NULL)); /* what is read has been checked */
   if (!plan)
     return 0;
   g_autofree char *text = kh_plan_file_dup_text (plan);
