@@ -179,7 +179,6 @@ GtkWidget *kh_cut_list_view_new (KhSession *session)
   g_signal_connect_swapped (view->selection, "notify::selected-item", G_CALLBACK (selected_cb), view);
   g_object_unref (view->selection);
   gtk_accessible_update_property (GTK_ACCESSIBLE (table), GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Cut list"), -1);
-  gtk_widget_add_css_class (scrolled, "kh-card");
   gtk_scrolled_window_set_policy (GTK_SCROLLED_WINDOW (scrolled), GTK_POLICY_NEVER, GTK_POLICY_AUTOMATIC);
   gtk_scrolled_window_set_min_content_height (GTK_SCROLLED_WINDOW (scrolled), 220);
   gtk_scrolled_window_set_max_content_height (GTK_SCROLLED_WINDOW (scrolled), 340);

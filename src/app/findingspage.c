@@ -386,7 +386,8 @@ GtkWidget *kh_findings_page_new (KhSession *session)
   page->aside_heading = kh_bench_heading_new (_ ("Set aside"));
   gtk_widget_set_hexpand (page->count, TRUE);
   gtk_label_set_wrap (GTK_LABEL (next), FALSE);
-  gtk_widget_set_valign (next, GTK_ALIGN_START);
+  gtk_widget_set_valign (next, GTK_ALIGN_BASELINE);
+  gtk_widget_set_valign (page->count, GTK_ALIGN_BASELINE);
   gtk_box_append (GTK_BOX (head), page->count);
   gtk_box_append (GTK_BOX (head), next);
   gtk_box_append (GTK_BOX (column), head);

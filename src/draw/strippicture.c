@@ -196,7 +196,7 @@ static void draw_axis (const Lanes *l)
 static void draw_least (const Lanes *l)
 {
   double x = CLAMP (x_of (l, l->data->least_clearance_at), l->x0 + 6 * l->px, l->x1 - 60 * l->px),
-         y = l->right1 - 8 * l->px, size = 4 * l->px;
+         y = l->right1 - 4 * l->px, size = 4 * l->px;
   cairo_move_to (l->cr, x, y - size);
   cairo_line_to (l->cr, x + size, y + size);
   cairo_line_to (l->cr, x - size, y + size);
