@@ -259,7 +259,7 @@ static char *dup_count (const KhReview *review)
   if (n[0] > 0)
     g_ptr_array_add (
         parts, g_strdup_printf (
-                   ngettext ("%d stops the build or the run", "%d stop the build or the run", (gulong)n[0]), n[0]));
+                   ngettext ("%d stops", "%d stop", (gulong)n[0]), n[0]));
   if (n[1] > 0)
     g_ptr_array_add (parts, g_strdup_printf (ngettext ("%d hinders", "%d hinder", (gulong)n[1]), n[1]));
   if (n[2] > 0)

@@ -244,6 +244,8 @@ void kh_plan_picture_draw_robot (const KhPlanPicture *picture, cairo_t *cr, cons
       draw_beam (cr, view, pose, side->front_mm, aside, (double)t->side_front_mm, px);
       draw_beam (cr, view, pose, -side->rear_mm, aside, (double)t->side_rear_mm, px);
     }
+  if (trace->has_contact) /* over the body that touches */
+    draw_contact (cr, picture, kh_view_to_device (view, trace->contact.at));
   cairo_restore (cr);
 }
 

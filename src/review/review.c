@@ -175,5 +175,8 @@ char *kh_review_dup_verdict (const KhReview *review, const KhPlan *plan)
     append_part (text, dup_walk_words (&review->walks[plan->robot.hand], plan->robot.hand));
   else
     append_part (text, g_strdup (_ ("no start on floor")));
+  const KhTrace *trace = review->traces[plan->robot.hand];
+  if (trace && trace->outcome != KH_OUTCOME_ARRIVED)
+    append_part (text, g_strdup (_ ("the preview does not arrive")));
   return g_string_free (text, FALSE);
 }
