@@ -50,7 +50,7 @@ static const Case cases[] = {
   { HEAD WALLS ", \"openings\": [{\"edge\": [0, 0, 1, 0], \"use\": \"door\"}]}",
     "x: openings[0].use: here stands \"door\"; give one of \"entrance\", \"exit\", \"plain\"" },
   { HEAD WALLS ", \"openings\": [{\"edge\": [0, 0, 1, 0], \"use\": \"exit\"}, {\"edge\": [1, 0, 0, 0], \"use\": \"exit\"}]}",
-    "x: openings: here stands [{\"edge\": [0, 0, 1, 0], \"use\": \"exit\"}, {\"edge…; an edge is named twice; keep one opening for each" },
+    "x: openings: here stands [{\"edge\": [0, 0, 1, 0], \"use\": \"exit\"}, {\"edge\":…; an edge is named twice; keep one opening for each" },
   { HEAD WALLS ", \"marks\": [{\"cell\": [2, 0], \"size_mm\": [80, 80]}]}",
     "x: marks[0].cell: here stands [2, 0]; the cell lies outside the lattice; columns go from 0 to 1, rows from 0 to 1" },
   { HEAD WALLS ", \"marks\": [{\"cell\": [1, 0]}]}", "x: marks[0].size_mm: this member is missing; add it" },
