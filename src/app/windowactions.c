@@ -47,6 +47,23 @@ static void redo_cb (GSimpleAction *action, GVariant *target, gpointer data)
   kh_session_redo (KH_WINDOW (data)->session);
 }
 
+static void play_cb (GSimpleAction *action, GVariant *target, gpointer data)
+{
+  KhSession *session = KH_WINDOW (data)->session;
+  kh_session_set_playing (session, !kh_session_get_playing (session));
+}
+
+static void play_from_start_cb (GSimpleAction *action, GVariant *target, gpointer data)
+{
+  kh_session_set_played_tick (KH_WINDOW (data)->session, 0);
+}
+
+static void show_hand_cb (GSimpleAction *action, GVariant *target, gpointer data)
+{
+  const char *hand = g_variant_get_string (target, NULL);
+  kh_session_set_hand (KH_WINDOW (data)->session, strcmp (hand, "left") == 0 ? KH_HAND_LEFT : KH_HAND_RIGHT);
+}
+
 static void set_preview_cb (GSimpleAction *action, GVariant *state, gpointer data)
 {
   kh_session_set_preview (KH_WINDOW (data)->session, g_variant_get_boolean (state));
@@ -213,6 +230,9 @@ static const GActionEntry entries[] = {
   { "undo", undo_cb },
   { "redo", redo_cb },
   { "preview", NULL, NULL, "true", set_preview_cb },
+  { "play", play_cb },
+  { "play-from-start", play_from_start_cb },
+  { "show-hand", show_hand_cb, "s" },
   { "tool", NULL, "s", "'walls'", set_tool_cb },
   { "walls-mode", NULL, "s", "'lay'", set_walls_mode_cb },
   { "bench", NULL, "s", "'findings'", set_bench_cb },
@@ -248,6 +268,8 @@ static const struct
   { "win.undo", { "<Control>z" } },
   { "win.redo", { "<Control><Shift>z", "<Control>y" } },
   { "win.preview", { "<Control>r" } },
+  { "win.play", { "F5" } },
+  { "win.play-from-start", { "<Shift>F5" } },
   { "win.strip", { "F9" } },
   { "win.zoom-in", { "<Control>plus", "<Control>equal", "<Control>KP_Add" } },
   { "win.zoom-out", { "<Control>minus", "<Control>KP_Subtract" } },
