@@ -8,8 +8,17 @@
 #include <math.h>
 #include <string.h>
 
+/* A sanitizer makes a run ten times as long, and needs only a few to see what it looks for. */
+#if defined(__has_feature)
+#if __has_feature(address_sanitizer)
+#define N_MAZES 6
+#define N_WITH_ERRORS 12
+#endif
+#endif
+#ifndef N_MAZES
 #define N_MAZES 100
 #define N_WITH_ERRORS 300
+#endif
 #define LEAST_SHARE 0.985    /* of runs with the default errors */
 #define LEAST_CLEARANCE 0.12 /* of the pitch, no errors */
 
