@@ -4,7 +4,7 @@
 # quick: one compiler, no sanitizers.  Ends in a line "N passed, N failed, N skipped".
 set -u
 top=$(cd "$(dirname "$0")/.." && pwd)
-packages='gcc g++ clang libclang-rt-14-dev meson ninja-build pkg-config gettext python3 libglib2.0-dev libglib2.0-bin libcjson-dev libcairo2-dev
+packages='gcc g++ clang llvm libclang-rt-14-dev meson ninja-build pkg-config gettext python3 libglib2.0-dev libglib2.0-bin libcjson-dev libcairo2-dev
  libpango1.0-dev libgtk-4-dev libcmocka-dev libgeos-dev libgsl-dev xvfb xauth xdotool dbus at-spi2-core libatspi2.0-dev imagemagick x11-utils poppler-utils
  librsvg2-bin desktop-file-utils appstream shared-mime-info libxml2-utils yelp-tools groff-base adwaita-icon-theme gsettings-desktop-schemas fonts-noto-core fonts-dejavu-core'
 . "$top/tests/packages.sh"
@@ -42,7 +42,7 @@ suite() {
 
 suite build-tests 'gcc, all suites' --buildtype=debugoptimized -Dwerror=true --
 if [ "${1:-}" != quick ]; then
-  export CC=clang ASAN_OPTIONS=detect_leaks=1 UBSAN_OPTIONS=halt_on_error=1:print_stacktrace=1
+  export CC=clang ASAN_OPTIONS=detect_leaks=1 LSAN_OPTIONS=suppressions=$top/tests/lsan.supp:print_suppressions=0 UBSAN_OPTIONS=halt_on_error=1:print_stacktrace=1
   suite build-sanitized 'clang, address and undefined-behaviour sanitizers' --buildtype=debugoptimized -Dwerror=true \
     -Db_sanitize=address,undefined -Db_lundef=false -- --timeout-multiplier 8 --no-suite app --no-suite data
 fi
