@@ -5,7 +5,7 @@
 set -eu
 top=$(cd "$(dirname "$0")/.." && pwd)
 build=$top/build
-packages='gcc meson ninja-build pkg-config gettext libglib2.0-dev libglib2.0-bin libcjson-dev libcairo2-dev libpango1.0-dev libgtk-4-dev desktop-file-utils adwaita-icon-theme fonts-dejavu-core'
+packages='gcc meson ninja-build pkg-config gettext libglib2.0-dev libglib2.0-bin libcjson-dev libcairo2-dev libpango1.0-dev libgtk-4-dev desktop-file-utils appstream adwaita-icon-theme fonts-dejavu-core'
 . "$top/tests/packages.sh"
 
 install_missing $packages

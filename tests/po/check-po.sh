@@ -6,9 +6,11 @@ command -v xgettext >/dev/null || { echo "gettext is missing: left out"; exit 77
 work=$(mktemp -d) || exit 99
 trap 'rm -rf "$work"' EXIT
 failed=0
-find src -name '*.c' -o -name '*.ui' | sort | while read -r file; do
+{ find src -name '*.c' -o -name '*.ui'; } | sort | while read -r file; do
   if grep -qE '\b_ ?\(|\bC_ ?\(|\bN_ ?\(|ngettext|translatable="yes"' "$file"; then echo "$file"; fi
 done >"$work/wanted"
+ls data/*.desktop.in data/*.metainfo.xml.in >>"$work/wanted" 2>/dev/null
+sort -o "$work/wanted" "$work/wanted"
 sort po/POTFILES >"$work/listed"
 if ! diff "$work/listed" "$work/wanted" >"$work/diff"; then
   echo "po/POTFILES differs from the sources with words (< listed, > wanted):"; cat "$work/diff"; failed=1
