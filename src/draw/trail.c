@@ -253,10 +253,10 @@ void kh_plan_picture_draw_key (const KhPlanPicture *picture, cairo_t *cr, double
 {
   static const int states[] = { KH_STATE_FOLLOW, KH_STATE_LEAD_IN, KH_STATE_CURVE, KH_STATE_PIVOT, KH_STATE_SEARCHING };
   double px = picture->text_size / 11, step = 20 * px;
-  KhWords words = { x, y + 7 * px, picture->text_size, FALSE, KH_ALIGN_START, 0, 0 };
+  KhWords words = { x, y - 1 * px, picture->text_size, FALSE, KH_ALIGN_START, 0, 0 };
   cairo_save (cr);
   kh_palette_set_source (cr, picture->scheme, KH_INK_TEXT_SECOND, 1);
-  kh_pen_words (cr, &words, hand == KH_HAND_RIGHT ? _ ("Trail of the right flank") : _ ("Trail of the left flank"));
+  kh_pen_words (cr, &words, hand == KH_HAND_RIGHT ? _ ("Trail of the\nright flank") : _ ("Trail of the\nleft flank"));
   words.x = x + 32 * px;
   for (gsize i = 0; i <= G_N_ELEMENTS (states); i++)
     {
