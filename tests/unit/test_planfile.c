@@ -1,6 +1,7 @@
 /* SPDX-License-Identifier: MIT */
 /* What is said of a plan file that cannot be read, word for word, and what is kept of one that can. */
 #include "../cmocka_all.h"
+#include "base/units.h"
 #include "files/planfile.h"
 #include <string.h>
 
@@ -147,6 +148,29 @@ static void lengths_are_kept_to_the_nanometre (void **state)
   assert_non_null (strstr (text, "\"thickness_mm\": 11.90625,"));
 }
 
+/* The limits of a robot's numbers stand in the model and in the file's tables: they are the same. */
+static void a_robots_limits_are_those_of_the_model (void **state)
+{
+  gsize n;
+  const KhRobotMember *members = kh_robot_get_members (&n);
+  for (gsize i = 0; i < n; i++)
+    for (int side = 0; side < 2; side++)
+      for (int beyond = 0; beyond < 2; beyond++)
+        {
+          double limit = side ? members[i].most : members[i].least, step = members[i].kind == KH_MEMBER_INT ? 1 : 1e-3;
+          if (members[i].kind == KH_MEMBER_BOOLEAN)
+            continue;
+          g_autofree char *number = kh_number_dup_file_text (limit + (beyond ? side ? step : -step : 0));
+          /* Two side sensors in one place are refused for another reason. */
+          const char *with = strcmp (members[i].name, "front_mm") == 0 ? ", \"rear_mm\": 5" : strcmp (members[i].name, "rear_mm") == 0 ? ", \"front_mm\": 5" : "";
+          g_autofree char *text = g_strdup_printf (HEAD WALLS ", \"robot\": {\"%s\": {\"%s\": %s%s}}}", members[i].object, members[i].name, number, with);
+          g_autoptr (GPtrArray) faults = NULL;
+          g_autoptr (KhPlan) plan = kh_plan_file_parse (text, strlen (text), "x", &faults);
+          if ((plan != NULL) == beyond)
+            fail_msg ("%s.%s = %s: %s", members[i].object, members[i].name, number, plan ? "taken" : (char *) g_ptr_array_index (faults, 0));
+        }
+}
+
 int main (void)
 {
   const struct CMUnitTest tests[] = {
@@ -155,6 +179,7 @@ int main (void)
     cmocka_unit_test (members_not_known_are_kept),
     cmocka_unit_test (what_editing_can_bring_about_is_read),
     cmocka_unit_test (lengths_are_kept_to_the_nanometre),
+    cmocka_unit_test (a_robots_limits_are_those_of_the_model),
   };
   return cmocka_run_group_tests (tests, NULL, NULL);
 }
