@@ -102,6 +102,59 @@ static gboolean try_number (gpointer data, const char *text, char **fault)
   return good;
 }
 
+/* ---- ranges of the sensors ---- */
+
+typedef struct
+{
+  KhSession *session;
+  gboolean side; /* else the front sensor */
+  int end;       /* 0 least, 1 most */
+} Range;
+
+static double *range_of (KhRobot *robot, const Range *range)
+{
+  return range->side ? robot->side_sensors.range_mm : robot->front_sensor.range_mm;
+}
+
+static char *dup_range (gpointer data)
+{
+  const Range *range = data;
+  KhRobot *robot = (KhRobot *)&kh_session_get_plan (range->session)->robot; /* only looked at */
+  return kh_length_dup_text (kh_nm_from_mm (range_of (robot, range)[range->end]), kh_settings_get_unit (), TRUE);
+}
+
+static gboolean try_range (gpointer data, const char *text, char **fault)
+{
+  const Range *range = data;
+  KhRobot robot;
+  int64_t nm;
+  g_autoptr (GError) error = NULL;
+  if (!kh_length_parse (text, kh_settings_get_unit (), &nm, &error))
+    {
+      *fault = g_strdup (error->message);
+      return FALSE;
+    }
+  kh_robot_copy (&robot, &kh_session_get_plan (range->session)->robot);
+  range_of (&robot, range)[range->end] = kh_mm_from_nm (nm);
+  gboolean good = kh_robot_check (&robot, &error);
+  if (good)
+    kh_session_do_take (range->session, kh_change_new_robot (&robot), _ ("Range of a sensor changed"));
+  else
+    *fault = g_strdup (error->message);
+  kh_robot_clear (&robot);
+  return good;
+}
+
+static void add_range (GtkWidget *column, KhSession *session, gboolean side, int end)
+{
+  Range *range = g_new (Range, 1);
+  *range = (Range){ session, side, end };
+  GtkWidget *row = kh_bench_row_new (end == 0 ? _ ("Least reading") : _ ("Most reading"),
+                                     kh_bench_entry_new (try_range, dup_range, range, g_free));
+  gtk_widget_set_size_request (gtk_widget_get_first_child (row), 176, -1);
+  gtk_box_append (GTK_BOX (column), row);
+}
+
 /* ---- choices ---- */
 
 static void change_robot (Page *page, void (*edit) (KhRobot *robot, guint value), guint value, const char *words)
@@ -248,6 +301,10 @@ static void add_section (GtkWidget *column, Page *page, const char *object, cons
       else
         add_number (box, page->session, &members[i]);
     }
+  for (int end = 0; end < 2 && g_str_has_suffix (object, "_sensors"); end++)
+    add_range (box, page->session, TRUE, end);
+  for (int end = 0; end < 2 && strcmp (object, "front_sensor") == 0; end++)
+    add_range (box, page->session, FALSE, end);
   gtk_widget_set_margin_top (box, 6);
   gtk_expander_set_child (GTK_EXPANDER (expander), box);
   gtk_expander_set_expanded (GTK_EXPANDER (expander), strcmp (object, "body") == 0);

@@ -45,9 +45,11 @@ static void judge_width (KhReview *review, const KhPlan *plan)
 static void judge_preview (KhReview *review, const KhPlan *plan)
 {
   if (plan->robot.errors.wall_place_mm > 0)
-    tell (review, "preview-limits", KH_SEVERITY_NOTES, 0, 0,
-          g_strdup (_ ("The preview has every panel exactly in its place.")),
+    tell (review, "preview-limits", KH_SEVERITY_NOTES, 0, 0, g_strdup (_ ("The preview has every panel exactly in its place.")),
           g_strdup (_ ("What careless building does, “wall_place_mm”, is kept in the plan and not drawn.")));
+  if (plan->build.joint != KH_JOINT_BUTT || plan->build.ends != KH_ENDS_FULL)
+    tell (review, "preview-limits", KH_SEVERITY_NOTES, 0, 0, g_strdup (_ ("The preview drives among walls with full ends.")),
+          g_strdup (_ ("This plan's joint ends walls elsewhere, by half a thickness or by its posts; leave that much more room.")));
 }
 
 void kh_judge_robot (KhReview *review, const KhPlan *plan)
