@@ -44,9 +44,8 @@ static double look_aside (const KhRobot *robot, const KhSolids *solids, KhPose p
   KhVec from
       = { pose.x + ahead * c + hand_sign * side->offset_mm * s, pose.y + ahead * s - hand_sign * side->offset_mm * c };
   kh_ray_cast (solids, from, hand_sign * s, -hand_sign * c, &hit);
-  gboolean seen = hit.distance >= side->range_mm[0] && hit.distance <= side->range_mm[1]
-                  && hit.incidence >= kh_cos (RAD (side->incidence_limit_deg));
-  return seen ? hit.distance : (double)NAN;
+  gboolean seen = hit.distance <= side->range_mm[1] && hit.incidence >= kh_cos (RAD (side->incidence_limit_deg));
+  return seen ? MAX (hit.distance, side->range_mm[0]) : (double)NAN;
 }
 
 void kh_sensors_read_side (const KhRobot *robot, const KhSolids *solids, KhPose pose, double hand_sign,
@@ -77,7 +76,7 @@ void kh_sensors_read_front (const KhRobot *robot, const KhSolids *solids, KhPose
       if (hit.incidence >= limit && hit.distance < nearest)
         nearest = hit.distance;
     }
-  gboolean seen = nearest >= front->range_mm[0] && nearest <= front->range_mm[1];
-  readings->front = spoil (errors, tick, seen ? nearest : (double)NAN, errors->front_bias, robot->errors.front_noise_mm,
-                           robot->errors.front_step_mm, KH_DRAW_FRONT);
+  gboolean seen = nearest <= front->range_mm[1];
+  readings->front = spoil (errors, tick, seen ? MAX (nearest, front->range_mm[0]) : (double)NAN, errors->front_bias,
+                           robot->errors.front_noise_mm, robot->errors.front_step_mm, KH_DRAW_FRONT);
 }

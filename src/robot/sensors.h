@@ -6,7 +6,9 @@
 
 /* What the robot's sensors say. A reading is millimetres from the sensor to
  * the wall, or NAN where there is no echo: nothing in range, or the wall met
- * too far off its normal (a painted board mirrors sound and light). */
+ * too far off its normal (a painted board mirrors sound and light). Nearer
+ * than the least reading, a sensor says the least: a wall at its face must not
+ * look like no wall. */
 
 typedef struct
 {
