@@ -15,6 +15,11 @@ typedef struct
   KhSession *session;
   GtkWidget *play, *speed, *when, *where, *doing, *area, *hands[2];
   gboolean filling;
+  /* the run as drawn last, and what it was drawn for */
+  cairo_surface_t *drawn;
+  KhStripData *drawn_lanes;
+  KhScheme drawn_scheme;
+  int drawn_width, drawn_height, drawn_scale;
 } Strip;
 
 static KhStripPicture picture_of (Strip *strip, double width, double height)
@@ -22,13 +27,45 @@ static KhStripPicture picture_of (Strip *strip, double width, double height)
   return (KhStripPicture){ kh_scheme_get (), width, height, 11, kh_session_get_played_tick (strip->session) };
 }
 
+/* The run itself is drawn once and kept; playing moves only the mark over it. */
+static void keep_lanes (Strip *strip, const KhStripPicture *picture, KhStripData *lanes)
+{
+  int width = (int)picture->width, height = (int)picture->height, scale = gtk_widget_get_scale_factor (strip->area);
+  if (strip->drawn && strip->drawn_lanes == lanes && strip->drawn_scheme == picture->scheme
+      && strip->drawn_width == width && strip->drawn_height == height && strip->drawn_scale == scale)
+    return;
+  g_clear_pointer (&strip->drawn, cairo_surface_destroy);
+  strip->drawn = cairo_image_surface_create (CAIRO_FORMAT_ARGB32, width * scale, height * scale);
+  cairo_surface_set_device_scale (strip->drawn, scale, scale);
+  cairo_t *cr = cairo_create (strip->drawn);
+  kh_strip_picture_draw_lanes (picture, cr, lanes);
+  cairo_destroy (cr);
+  strip->drawn_lanes = lanes;
+  strip->drawn_scheme = picture->scheme;
+  strip->drawn_width = width;
+  strip->drawn_height = height;
+  strip->drawn_scale = scale;
+}
+
 static void draw_cb (GtkDrawingArea *area, cairo_t *cr, int width, int height, gpointer data)
 {
   Strip *strip = data;
   KhStripData *lanes = kh_session_get_strip (strip->session, kh_session_get_hand (strip->session));
   KhStripPicture picture = picture_of (strip, width, height);
-  if (lanes)
-    kh_strip_picture_draw (&picture, cr, lanes);
+  if (!lanes)
+    return;
+  keep_lanes (strip, &picture, lanes);
+  cairo_set_source_surface (cr, strip->drawn, 0, 0);
+  cairo_paint (cr);
+  kh_strip_picture_draw_played (&picture, cr, lanes);
+}
+
+/* Other results may lie where the old ones lay. */
+static void forget_lanes (GtkWidget *widget)
+{
+  Strip *strip = g_object_get_data (G_OBJECT (widget), "kh-strip");
+  g_clear_pointer (&strip->drawn, cairo_surface_destroy);
+  gtk_widget_queue_draw (strip->area);
 }
 
 /* ---- where it is, in words ---- */
@@ -270,6 +307,7 @@ static void strip_free (gpointer data)
 {
   Strip *strip = data;
   g_object_unref (strip->session);
+  g_clear_pointer (&strip->drawn, cairo_surface_destroy);
   g_free (strip);
 }
 
@@ -298,6 +336,7 @@ GtkWidget *kh_run_strip_new (KhSession *session)
   gtk_box_append (GTK_BOX (widget), controls);
   gtk_box_append (GTK_BOX (widget), strip->area);
   kh_player_attach (widget, session);
+  kh_bench_follow (widget, session, "review-changed", G_CALLBACK (forget_lanes));
   kh_bench_follow (widget, session, "player-changed", G_CALLBACK (show_moment));
   kh_bench_follow (widget, session, "review-changed", G_CALLBACK (show_moment));
   g_signal_connect_object (gtk_settings_get_default (), "notify::gtk-application-prefer-dark-theme",

@@ -224,7 +224,7 @@ static void draw_played (const Lanes *l)
   cairo_fill (l->cr);
 }
 
-void kh_strip_picture_draw (const KhStripPicture *picture, cairo_t *cr, const KhStripData *data)
+void kh_strip_picture_draw_lanes (const KhStripPicture *picture, cairo_t *cr, const KhStripData *data)
 {
   Lanes l = lanes_of (picture, data, cr);
   if (l.x1 <= l.x0 + 20)
@@ -242,8 +242,23 @@ void kh_strip_picture_draw (const KhStripPicture *picture, cairo_t *cr, const Kh
   say (&l, (l.body1 + l.right1) / 2, _ ("right, mm"));
   say (&l, (l.front0 + l.front1) / 2, _ ("front, mm"));
   say (&l, (l.state0 + l.state1) / 2, _ ("state"));
+  cairo_restore (cr);
+}
+
+void kh_strip_picture_draw_played (const KhStripPicture *picture, cairo_t *cr, const KhStripData *data)
+{
+  Lanes l = lanes_of (picture, data, cr);
+  if (l.x1 <= l.x0 + 20)
+    return;
+  cairo_save (cr);
   draw_played (&l);
   cairo_restore (cr);
+}
+
+void kh_strip_picture_draw (const KhStripPicture *picture, cairo_t *cr, const KhStripData *data)
+{
+  kh_strip_picture_draw_lanes (picture, cr, data);
+  kh_strip_picture_draw_played (picture, cr, data);
 }
 
 gsize kh_strip_picture_tick_at (const KhStripPicture *picture, const KhStripData *data, double x)

@@ -13,4 +13,7 @@ void kh_strip_data_free (KhStripData *data);
 
 typedef struct { KhScheme scheme; double width, height, text_size; gsize played_tick; } KhStripPicture;
 void kh_strip_picture_draw (const KhStripPicture *picture, cairo_t *cr, const KhStripData *data);
+/* The parts, for a strip that keeps what did not change: the run, and the mark of the played moment. */
+void kh_strip_picture_draw_lanes (const KhStripPicture *picture, cairo_t *cr, const KhStripData *data);
+void kh_strip_picture_draw_played (const KhStripPicture *picture, cairo_t *cr, const KhStripData *data);
 gsize kh_strip_picture_tick_at (const KhStripPicture *picture, const KhStripData *data, double x); /* under the pointer */
