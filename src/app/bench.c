@@ -63,9 +63,37 @@ GtkWidget *kh_bench_words_new (const char *text, const char *css)
   return frame;
 }
 
+/* A page that is not shown is brought up to date when it is: an edit costs what can be seen of it. */
+typedef struct
+{
+  GtkWidget *widget;
+  void (*callback) (GtkWidget *widget);
+  gboolean late;
+} Follow;
+
+static void follow_cb (Follow *follow)
+{
+  follow->late = !gtk_widget_get_mapped (follow->widget);
+  if (!follow->late)
+    follow->callback (follow->widget);
+}
+
+static void shown_cb (Follow *follow)
+{
+  if (follow->late)
+    follow_cb (follow);
+}
+
+static void follow_free (gpointer data, GClosure *closure) { g_free (data); }
+
 void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped)
 {
-  g_signal_connect_object (session, signal, callback_swapped, widget, G_CONNECT_SWAPPED);
+  Follow *follow = g_new (Follow, 1);
+  *follow = (Follow){ widget, (void (*) (GtkWidget *))callback_swapped, FALSE };
+  GClosure *closure = g_cclosure_new_swap (G_CALLBACK (follow_cb), follow, NULL);
+  g_object_watch_closure (G_OBJECT (widget), closure);
+  g_signal_connect_closure (session, signal, closure, FALSE);
+  g_signal_connect_data (widget, "map", G_CALLBACK (shown_cb), follow, follow_free, G_CONNECT_SWAPPED | G_CONNECT_AFTER);
 }
 
 /* ---- entries ---- */

@@ -13,7 +13,8 @@ GtkWidget *kh_bench_note_new (const char *text);            /* second-rank words
 /* "Label  [widget]" in one row; the label is the widget's mnemonic and name. */
 GtkWidget *kh_bench_row_new (const char *label, GtkWidget *widget);
 
-/* Connects to a signal of the session for as long as the widget lives. */
+/* Calls back on a signal of the session for as long as the widget lives; while
+ * it is not shown, once when it is. */
 void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped);
 
 /* A number typed with its unit. Tries the text; TRUE: it was taken over. FALSE:

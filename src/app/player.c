@@ -1,6 +1,5 @@
 /* SPDX-License-Identifier: MIT */
 #include "app/player.h"
-#include "app/bench.h"
 
 typedef struct
 {
@@ -63,5 +62,5 @@ void kh_player_attach (GtkWidget *widget, KhSession *session)
   Player *player = g_new0 (Player, 1);
   player->session = g_object_ref (session);
   g_object_set_data_full (G_OBJECT (widget), "kh-player", player, player_free);
-  kh_bench_follow (widget, session, "player-changed", G_CALLBACK (follow));
+  g_signal_connect_object (session, "player-changed", G_CALLBACK (follow), widget, G_CONNECT_SWAPPED);
 }
