@@ -282,7 +282,7 @@ static GtkWidget *controls_new (Strip *strip)
   strip->doing = words_new ("kh-heading");
   strip->where = words_new ("kh-second");
   gtk_label_set_ellipsize (GTK_LABEL (strip->when), PANGO_ELLIPSIZE_NONE);
-  gtk_label_set_width_chars (GTK_LABEL (strip->when), 17);
+  gtk_label_set_width_chars (GTK_LABEL (strip->when), 15);
   gtk_box_append (GTK_BOX (texts), strip->doing);
   gtk_box_append (GTK_BOX (texts), strip->where);
   gtk_widget_set_hexpand (texts, TRUE);

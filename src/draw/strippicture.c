@@ -237,9 +237,10 @@ void kh_strip_picture_draw_lanes (const KhStripPicture *picture, cairo_t *cr, co
   draw_axis (&l);
   draw_states (&l);
   draw_least (&l);
-  say (&l, (l.left0 + l.left1) / 2, _ ("left, mm"));
-  say (&l, (l.left1 + l.body1) / 2, _ ("body"));
-  say (&l, (l.body1 + l.right1) / 2, _ ("right, mm"));
+  say (&l, MIN ((l.left0 + l.left1) / 2, l.left0 + 0.25 * (l.right1 - l.left0)), _ ("left, mm"));
+  if (l.right1 - l.left0 > 46 * l.px) /* else the three names would run into each other */
+    say (&l, (l.left1 + l.body1) / 2, _ ("body"));
+  say (&l, MAX ((l.body1 + l.right1) / 2, l.right1 - 0.25 * (l.right1 - l.left0)), _ ("right, mm"));
   say (&l, (l.front0 + l.front1) / 2, _ ("front, mm"));
   say (&l, (l.state0 + l.state1) / 2, _ ("state"));
   cairo_restore (cr);

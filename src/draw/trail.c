@@ -258,6 +258,7 @@ void kh_plan_picture_draw_key (const KhPlanPicture *picture, cairo_t *cr, double
   kh_palette_set_source (cr, picture->scheme, KH_INK_TEXT_SECOND, 1);
   kh_pen_words (cr, &words, hand == KH_HAND_RIGHT ? _ ("Trail of the\nright flank") : _ ("Trail of the\nleft flank"));
   words.x = x + 32 * px;
+  words.y += 8 * px; /* the heading has two lines */
   for (gsize i = 0; i <= G_N_ELEMENTS (states); i++)
     {
       gboolean touched = i == G_N_ELEMENTS (states);
