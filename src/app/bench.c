@@ -68,32 +68,56 @@ typedef struct
 {
   GtkWidget *widget;
   void (*callback) (GtkWidget *widget);
+  guint delay_ms, source;
   gboolean late;
 } Follow;
 
-static void follow_cb (Follow *follow)
+static gboolean call_cb (gpointer data)
 {
+  Follow *follow = data;
+  follow->source = 0;
   follow->late = !gtk_widget_get_mapped (follow->widget);
   if (!follow->late)
     follow->callback (follow->widget);
+  return G_SOURCE_REMOVE;
+}
+
+static void follow_cb (Follow *follow)
+{
+  if (follow->delay_ms == 0)
+    call_cb (follow);
+  else if (follow->source == 0)
+    follow->source = g_timeout_add (follow->delay_ms, call_cb, follow);
 }
 
 static void shown_cb (Follow *follow)
 {
   if (follow->late)
-    follow_cb (follow);
+    call_cb (follow);
 }
 
-static void follow_free (gpointer data, GClosure *closure) { g_free (data); }
-
-void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped)
+static void follow_free (gpointer data, GClosure *closure)
 {
-  Follow *follow = g_new (Follow, 1);
-  *follow = (Follow){ widget, (void (*) (GtkWidget *))callback_swapped, FALSE };
+  Follow *follow = data;
+  g_clear_handle_id (&follow->source, g_source_remove);
+  g_free (follow);
+}
+
+void kh_bench_follow_later (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped, guint delay_ms)
+{
+  Follow *follow = g_new0 (Follow, 1);
+  follow->widget = widget;
+  follow->callback = (void (*) (GtkWidget *))callback_swapped;
+  follow->delay_ms = delay_ms;
   GClosure *closure = g_cclosure_new_swap (G_CALLBACK (follow_cb), follow, NULL);
   g_object_watch_closure (G_OBJECT (widget), closure);
   g_signal_connect_closure (session, signal, closure, FALSE);
   g_signal_connect_data (widget, "map", G_CALLBACK (shown_cb), follow, follow_free, G_CONNECT_SWAPPED | G_CONNECT_AFTER);
+}
+
+void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped)
+{
+  kh_bench_follow_later (widget, session, signal, callback_swapped, 0);
 }
 
 /* ---- entries ---- */

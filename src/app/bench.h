@@ -16,6 +16,9 @@ GtkWidget *kh_bench_row_new (const char *label, GtkWidget *widget);
 /* Calls back on a signal of the session for as long as the widget lives; while
  * it is not shown, once when it is. */
 void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped);
+/* The same, once for all signals of some milliseconds: so that an edit's frame
+ * paints the canvas, and the lists beside it come a frame later. */
+void kh_bench_follow_later (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped, guint delay_ms);
 
 /* A number typed with its unit. Tries the text; TRUE: it was taken over. FALSE:
  * *fault (owned) says what is wrong, and nothing was changed. */

@@ -397,7 +397,7 @@ GtkWidget *kh_findings_page_new (KhSession *session)
   gtk_box_append (GTK_BOX (column), kh_bench_heading_new (_ ("Looked at and found sound")));
   gtk_box_append (GTK_BOX (column), page->sound);
   g_object_set_data_full (G_OBJECT (widget), "kh-page", page, page_free);
-  kh_bench_follow (widget, session, "review-changed", G_CALLBACK (fill));
+  kh_bench_follow_later (widget, session, "review-changed", G_CALLBACK (fill), 20);
   kh_bench_follow (widget, session, "selection-changed", G_CALLBACK (mark_chosen));
   fill (widget);
   return widget;

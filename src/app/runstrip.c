@@ -311,6 +311,12 @@ static void strip_free (gpointer data)
   g_free (strip);
 }
 
+static void show_run (GtkWidget *widget)
+{
+  forget_lanes (widget);
+  show_moment (widget);
+}
+
 GtkWidget *kh_run_strip_new (KhSession *session)
 {
   Strip *strip = g_new0 (Strip, 1);
@@ -336,9 +342,8 @@ GtkWidget *kh_run_strip_new (KhSession *session)
   gtk_box_append (GTK_BOX (widget), controls);
   gtk_box_append (GTK_BOX (widget), strip->area);
   kh_player_attach (widget, session);
-  kh_bench_follow (widget, session, "review-changed", G_CALLBACK (forget_lanes));
-  kh_bench_follow (widget, session, "player-changed", G_CALLBACK (show_moment));
-  kh_bench_follow (widget, session, "review-changed", G_CALLBACK (show_moment));
+    kh_bench_follow (widget, session, "player-changed", G_CALLBACK (show_moment));
+  kh_bench_follow_later (widget, session, "review-changed", G_CALLBACK (show_run), 40);
   g_signal_connect_object (gtk_settings_get_default (), "notify::gtk-application-prefer-dark-theme",
                            G_CALLBACK (gtk_widget_queue_draw), strip->area, G_CONNECT_SWAPPED);
   show_moment (widget);

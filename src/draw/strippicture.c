@@ -50,10 +50,33 @@ static void say (const Lanes *l, double y, const char *text)
   kh_pen_words (l->cr, &words, text);
 }
 
+/* A line sample by sample: it stops where there is no value (NAN), and leaves
+ * out what lies within a pixel of the last. */
+typedef struct
+{
+  cairo_t *cr;
+  double px, x, y;
+  gboolean on;
+} Line;
+
+static void add_sample (Line *line, double x, double y)
+{
+  gboolean is = isfinite (y) != 0;
+  if (is && line->on && fabs (x - line->x) < line->px && fabs (y - line->y) < line->px)
+    return;
+  if (is && line->on)
+    cairo_line_to (line->cr, x, y);
+  else if (is)
+    cairo_move_to (line->cr, x, y);
+  line->on = is;
+  line->x = x;
+  line->y = y;
+}
+
 /* The line of one side: distance from the axle, upward on the left. It stops where the side is open. */
 static void draw_side (const Lanes *l, gboolean left)
 {
-  gboolean on = FALSE;
+  Line line = { .cr = l->cr, .px = l->px };
   double middle = (l->left1 + l->body1) / 2;
   cairo_save (l->cr);
   cairo_rectangle (l->cr, l->x0, left ? l->left0 : l->body1, l->x1 - l->x0,
@@ -65,12 +88,7 @@ static void draw_side (const Lanes *l, gboolean left)
     {
       const KhStripSample *s = &g_array_index (l->data->samples, KhStripSample, i);
       double mm = (double)(left ? s->left : s->right);
-      double x = x_of (l, (double)s->distance), y = middle + (left ? -1 : 1) * mm * l->per_mm;
-      if (isfinite (mm) && on)
-        cairo_line_to (l->cr, x, y);
-      else if (isfinite (mm))
-        cairo_move_to (l->cr, x, y);
-      on = isfinite (mm);
+      add_sample (&line, x_of (l, (double)s->distance), middle + (left ? -1 : 1) * mm * l->per_mm);
     }
   ink (l, KH_INK_WALL, 1);
   cairo_set_line_width (l->cr, 1.5 * l->px);
@@ -97,17 +115,12 @@ static void draw_body (const Lanes *l)
 static void draw_front (const Lanes *l)
 {
   const double dash[] = { 4 * l->px, 3 * l->px };
-  gboolean on = FALSE;
+  Line line = { .cr = l->cr, .px = l->px };
   double per = (l->front1 - l->front0) / l->data->front_most;
   for (guint i = 0; i < l->data->samples->len; i++)
     {
       const KhStripSample *s = &g_array_index (l->data->samples, KhStripSample, i);
-      double mm = (double)s->front, x = x_of (l, (double)s->distance), y = l->front1 - mm * per;
-      if (isfinite (mm) && on)
-        cairo_line_to (l->cr, x, y);
-      else if (isfinite (mm))
-        cairo_move_to (l->cr, x, y);
-      on = isfinite (mm);
+      add_sample (&line, x_of (l, (double)s->distance), l->front1 - (double)s->front * per);
     }
   ink (l, KH_INK_FOLLOW, 1);
   cairo_set_line_width (l->cr, 1.3 * l->px);

@@ -36,7 +36,7 @@ static void set_style (cairo_t *cr, const KhPlanPicture *picture, int state, dou
   cairo_set_line_width (cr, (style->width + (picture->high_contrast ? 1 : 0)) * px);
   cairo_set_dash (cr, dash, style->n_dash, 0);
   cairo_set_line_cap (cr, style->round ? CAIRO_LINE_CAP_ROUND : CAIRO_LINE_CAP_BUTT);
-  cairo_set_line_join (cr, CAIRO_LINE_JOIN_ROUND);
+  cairo_set_line_join (cr, CAIRO_LINE_JOIN_BEVEL);
 }
 
 /* Half the body's width: how far its flank is from the axle. */
@@ -65,13 +65,15 @@ static void add_arrow (cairo_t *cr, KhVec at, double dx, double dy, double size)
   cairo_close_path (cr);
 }
 
-/* Ticks from .. to of one state; points nearer than a pixel to the last are left out. */
+/* Ticks from .. to of one state. Points near the last are left out: along a wall the
+ * line hardly bends, in turns and curves it does; strokes cost by the point. */
 static void stroke_piece (cairo_t *cr, const KhPlanPicture *picture, const KhView *view, const KhTrace *trace,
                           double aside, gsize range[2], double alpha)
 {
-  double px = picture->text_size / 11, least = 0.8 * px;
+  double px = picture->text_size / 11;
   const KhTick *first = kh_trace_get_tick (trace, range[0]);
   int state = kh_trace_get_tick (trace, range[1])->state;
+  double least = (state == KH_STATE_CURVE || state == KH_STATE_PIVOT ? 1.5 : 6) * px;
   KhVec last = flank_at (view, first, aside);
   cairo_move_to (cr, last.x, last.y);
   for (gsize i = range[0] + 1; i <= range[1]; i++)
