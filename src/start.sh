@@ -16,10 +16,10 @@ window=$build/src/app/kerfhand
 plan=${1:-$top/data/examples/boat-house.mazeplan}
 
 if [ -n "${DISPLAY:-}${WAYLAND_DISPLAY:-}" ] && [ -x "$window" ]; then
-  # A copy: the example stays as it was drawn.
+  # A copy, made once: the example stays as it was drawn, and what was saved stays too.
   if [ $# -eq 0 ]; then
     mkdir -p "$build/start"
-    cp -f "$plan" "$build/start/boat-house.mazeplan"
+    [ -f "$build/start/boat-house.mazeplan" ] || cp "$plan" "$build/start/boat-house.mazeplan"
     plan=$build/start/boat-house.mazeplan
   fi
   # Settings are remembered without an installation too.

@@ -89,6 +89,7 @@ char *kh_reason_dup (const KhPlan *plan, const KhTrace *trace, KhCell cell, KhEd
     case KH_OUTCOME_LEFT:
       return dup_left (plan, name, out_edge);
     default:
-      return g_strdup_printf (_ ("It is still driving in %s when its time is up."), name);
+      return g_strdup_printf (_ ("It is still driving in %s after %.1f minutes; longer runs are not followed."), name,
+                              trace->time_s / 60);
     }
 }

@@ -12,6 +12,7 @@
 G_DEFINE_QUARK (kh - run - error - quark, kh_run_error)
 
 #define MOST_CROSSINGS 3
+#define MOST_TICKS 3000000 /* more is not kept: 150 MB, eight hours at 100 ticks a second */
 #define NUDGE 1e-6 /* mm: a pose on an edge belongs to the cell it heads into */
 
 typedef struct
@@ -325,7 +326,7 @@ static void drive (Run *run, KhJob *job)
 {
   const KhRobot *robot = &run->plan->robot;
   double most_s = 6.0 * count_floor (run->plan) * run->cell_size / robot->drive.cruise_mm_s + 30;
-  gint64 n_ticks = (gint64)ceil (most_s / run->period);
+  gint64 n_ticks = MIN ((gint64)ceil (most_s / run->period), MOST_TICKS);
   place_at_start (run);
   kh_clearance (run->solids, &robot->body, run->pose, &run->clearance);
   for (gint64 tick = 0; tick < n_ticks && !run->over; tick++)
