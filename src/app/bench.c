@@ -1,5 +1,7 @@
 /* SPDX-License-Identifier: MIT */
 #include "app/bench.h"
+
+#include <glib/gi18n-lib.h>
 #include <string.h>
 
 GtkWidget *kh_bench_page_new (GtkWidget **column)
@@ -120,6 +122,38 @@ void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal,
   kh_bench_follow_later (widget, session, signal, callback_swapped, 0);
 }
 
+/* ---- names ---- */
+
+static const char *find_words (GtkWidget *widget)
+{
+  if (GTK_IS_LABEL (widget))
+    return gtk_label_get_text (GTK_LABEL (widget));
+  for (GtkWidget *child = gtk_widget_get_first_child (widget); child; child = gtk_widget_get_next_sibling (child))
+    {
+      const char *words = find_words (child);
+      if (words && *words)
+        return words;
+    }
+  return NULL;
+}
+
+static void name_widget (GtkWidget *widget, const char *words)
+{
+  if (words && *words)
+    gtk_accessible_update_property (GTK_ACCESSIBLE (widget), GTK_ACCESSIBLE_PROPERTY_LABEL, words, -1);
+}
+
+void kh_bench_name_below (GtkWidget *widget)
+{
+  if (GTK_IS_EXPANDER (widget))
+    name_widget (widget, gtk_expander_get_label (GTK_EXPANDER (widget)));
+  else if (GTK_IS_BUTTON (widget) && !GTK_IS_DROP_DOWN (gtk_widget_get_parent (widget))
+           && gtk_button_get_label (GTK_BUTTON (widget)) == NULL)
+    name_widget (widget, gtk_widget_has_css_class (widget, "close") ? _ ("Close") : find_words (widget));
+  for (GtkWidget *child = gtk_widget_get_first_child (widget); child; child = gtk_widget_get_next_sibling (child))
+    kh_bench_name_below (child);
+}
+
 /* ---- entries ---- */
 
 typedef struct
@@ -141,7 +175,10 @@ GtkWidget *kh_bench_row_new (const char *label, GtkWidget *widget)
   gtk_widget_set_valign (name, GTK_ALIGN_START);
   gtk_widget_set_margin_top (name, 7);
   gtk_widget_set_hexpand (widget, TRUE);
+  /* What takes the focus: the text of an entry, the button within a list of choices. */
   GtkWidget *named = entry_of (widget) ? entry_of (widget)->text : widget;
+  if (GTK_IS_DROP_DOWN (widget))
+    name_widget (gtk_widget_get_first_child (widget), label);
   gtk_label_set_mnemonic_widget (GTK_LABEL (name), named);
   gtk_accessible_update_property (GTK_ACCESSIBLE (named), GTK_ACCESSIBLE_PROPERTY_LABEL, label, -1);
   gtk_box_append (GTK_BOX (row), name);

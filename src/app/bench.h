@@ -20,6 +20,10 @@ void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal,
  * paints the canvas, and the lists beside it come a frame later. */
 void kh_bench_follow_later (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped, guint delay_ms);
 
+/* GTK 4.8 names a button by its own label only: buttons and folding headings
+ * that hold their words deeper are given them as their name, all below 'widget'. */
+void kh_bench_name_below (GtkWidget *widget);
+
 /* A number typed with its unit. Tries the text; TRUE: it was taken over. FALSE:
  * *fault (owned) says what is wrong, and nothing was changed. */
 typedef gboolean (*KhTryText) (gpointer data, const char *text, char **fault);

@@ -65,6 +65,16 @@ static void setup_cb (GtkSignalListItemFactory *factory, GtkListItem *cell, gpoi
   gtk_list_item_set_child (cell, label);
 }
 
+/* The row, which takes the focus, is told as a whole. */
+static void name_row (GtkWidget *label, const KhCutItem *item)
+{
+  GtkWidget *cell = gtk_widget_get_parent (label), *row = cell ? gtk_widget_get_parent (cell) : NULL;
+  g_autofree char *length = kh_length_dup_text (item->length_nm, kh_settings_get_unit (), TRUE);
+  g_autofree char *name = g_strdup_printf ("%s × %d: %s", length, item->count, item->labels);
+  if (row)
+    gtk_accessible_update_property (GTK_ACCESSIBLE (row), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
+}
+
 static void bind_cb (GtkSignalListItemFactory *factory, GtkListItem *cell, gpointer column)
 {
   const KhCutItem *item = gtk_list_item_get_item (cell);
@@ -74,6 +84,7 @@ static void bind_cb (GtkSignalListItemFactory *factory, GtkListItem *cell, gpoin
                           : GPOINTER_TO_INT (column) == COLUMN_COUNT ? g_strdup_printf ("%d", item->count)
                                                                      : g_strdup (item->labels);
   gtk_label_set_text (GTK_LABEL (label), text);
+  name_row (label, item);
   kh_tip_set (label, GPOINTER_TO_INT (column) == COLUMN_LABELS ? item->labels : NULL);
 }
 

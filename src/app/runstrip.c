@@ -277,6 +277,8 @@ static GtkWidget *controls_new (Strip *strip)
   gtk_widget_set_valign (strip->speed, GTK_ALIGN_CENTER);
   gtk_accessible_update_property (GTK_ACCESSIBLE (strip->speed), GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Speed of playing"),
                                   -1);
+  gtk_accessible_update_property (GTK_ACCESSIBLE (gtk_widget_get_first_child (strip->speed)),
+                                  GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Speed of playing"), -1);
   g_signal_connect_swapped (strip->speed, "notify::selected", G_CALLBACK (speed_cb), strip);
   strip->when = words_new ("kh-heading");
   strip->doing = words_new ("kh-heading");

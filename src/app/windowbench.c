@@ -1,6 +1,7 @@
 /* SPDX-License-Identifier: MIT */
 #include "app/windowprivate.h"
 
+#include "app/bench.h"
 #include "app/findingspage.h"
 #include "app/mazepage.h"
 #include "app/panelspage.h"
@@ -126,6 +127,7 @@ void kh_window_fill_bench (KhWindow *self)
   gtk_stack_add_named (GTK_STACK (self->strip_stack), kh_run_strip_new (self->session), "run");
   gtk_stack_add_named (GTK_STACK (self->strip_stack), kh_saw_strip_new (self->session), "saw");
   kh_window_show_bench (self, g_variant_get_string (page, NULL));
+  kh_bench_name_below (GTK_WIDGET (self));
 }
 
 void kh_window_show_bench (KhWindow *self, const char *page)
