@@ -2,6 +2,7 @@
 #include "app/runstrip.h"
 #include "app/bench.h"
 #include "app/player.h"
+#include "app/readout.h"
 #include "app/runwords.h"
 #include "app/scheme.h"
 #include "app/tip.h"
@@ -102,17 +103,17 @@ static void show_moment (GtkWidget *widget)
   gtk_widget_queue_draw (strip->area);
   if (!trace)
     {
-      gtk_label_set_text (GTK_LABEL (strip->when), "");
-      gtk_label_set_text (GTK_LABEL (strip->where), "");
-      gtk_label_set_text (GTK_LABEL (strip->doing), waiting_words (strip));
+      kh_readout_set_text (KH_READOUT (strip->when), "");
+      kh_readout_set_text (KH_READOUT (strip->where), "");
+      kh_readout_set_text (KH_READOUT (strip->doing), waiting_words (strip));
       return;
     }
   gsize tick = kh_session_get_played_tick (strip->session);
   g_autofree char *when = kh_run_words_dup_when (trace, tick), *doing = kh_run_words_dup_doing (plan, trace, tick),
                   *free_ways = kh_run_words_dup_free (plan, trace, tick);
-  gtk_label_set_text (GTK_LABEL (strip->when), when);
-  gtk_label_set_text (GTK_LABEL (strip->doing), doing);
-  gtk_label_set_text (GTK_LABEL (strip->where), free_ways);
+  kh_readout_set_text (KH_READOUT (strip->when), when);
+  kh_readout_set_text (KH_READOUT (strip->doing), doing);
+  kh_readout_set_text (KH_READOUT (strip->where), free_ways);
   g_autofree char *name = g_strdup_printf ("%s. %s. %s", when, doing, free_ways);
   gtk_accessible_update_property (GTK_ACCESSIBLE (strip->area), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
 }
@@ -248,13 +249,11 @@ static GtkWidget *icon_button_new (const char *icon, const char *words, GCallbac
   return button;
 }
 
-static GtkWidget *words_new (const char *css)
+static GtkWidget *words_new (const char *css, int least_chars, int natural_chars)
 {
-  GtkWidget *label = gtk_label_new ("");
-  gtk_label_set_xalign (GTK_LABEL (label), 0);
-  gtk_label_set_ellipsize (GTK_LABEL (label), PANGO_ELLIPSIZE_END);
-  gtk_widget_add_css_class (label, css);
-  return label;
+  GtkWidget *words = kh_readout_new (least_chars, natural_chars, 0);
+  gtk_widget_add_css_class (words, css);
+  return words;
 }
 
 static GtkWidget *controls_new (Strip *strip)
@@ -280,11 +279,9 @@ static GtkWidget *controls_new (Strip *strip)
   gtk_accessible_update_property (GTK_ACCESSIBLE (gtk_widget_get_first_child (strip->speed)),
                                   GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Speed of playing"), -1);
   g_signal_connect_swapped (strip->speed, "notify::selected", G_CALLBACK (speed_cb), strip);
-  strip->when = words_new ("kh-heading");
-  strip->doing = words_new ("kh-heading");
-  strip->where = words_new ("kh-second");
-  gtk_label_set_ellipsize (GTK_LABEL (strip->when), PANGO_ELLIPSIZE_NONE);
-  gtk_label_set_width_chars (GTK_LABEL (strip->when), 15);
+  strip->when = words_new ("kh-heading", 15, 19);
+  strip->doing = words_new ("kh-heading", 10, 40);
+  strip->where = words_new ("kh-second", 10, 40);
   gtk_box_append (GTK_BOX (texts), strip->doing);
   gtk_box_append (GTK_BOX (texts), strip->where);
   gtk_widget_set_hexpand (texts, TRUE);

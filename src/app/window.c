@@ -1,6 +1,7 @@
 /* SPDX-License-Identifier: MIT */
 #include "app/windowprivate.h"
 
+#include "app/readout.h"
 #include "app/settings.h"
 #include "app/timing.h"
 #include "app/tip.h"
@@ -36,7 +37,7 @@ static void show_undo (KhWindow *self)
   const char *undo = kh_history_get_undo_words (history), *redo = kh_history_get_redo_words (history);
   g_autofree char *undo_text = undo != NULL ? g_strdup_printf (_ ("Undo: %s"), undo) : g_strdup ("");
   g_autofree char *redo_text = redo != NULL ? g_strdup_printf (_ ("Redo: %s"), redo) : g_strdup (_ ("Nothing to redo"));
-  gtk_label_set_text (GTK_LABEL (self->undo_label), undo_text);
+  kh_readout_set_text (KH_READOUT (self->undo_label), undo_text);
   kh_tip_set (self->undo_button, undo != NULL ? undo_text : _ ("Nothing to undo"));
   kh_tip_set (self->redo_button, redo_text);
   gtk_accessible_update_property (GTK_ACCESSIBLE (self->undo_button), GTK_ACCESSIBLE_PROPERTY_LABEL,
@@ -50,7 +51,7 @@ static void show_undo (KhWindow *self)
 static void show_pointed (KhWindow *self)
 {
   if (self->notice_source == 0)
-    gtk_label_set_text (GTK_LABEL (self->pointed_label), kh_canvas_get_pointed_text (KH_CANVAS (self->canvas)));
+    kh_readout_set_text (KH_READOUT (self->pointed_label), kh_canvas_get_pointed_text (KH_CANVAS (self->canvas)));
 }
 
 static gboolean end_notice_cb (gpointer data)
@@ -65,7 +66,7 @@ static gboolean end_notice_cb (gpointer data)
 static void notice_cb (KhCanvas *canvas, const char *text, KhWindow *self)
 {
   g_clear_handle_id (&self->notice_source, g_source_remove);
-  gtk_label_set_text (GTK_LABEL (self->pointed_label), text);
+  kh_readout_set_text (KH_READOUT (self->pointed_label), text);
   gtk_widget_add_css_class (self->pointed_label, "kh-notice");
   self->notice_source = g_timeout_add_seconds (6, end_notice_cb, self);
 }
@@ -86,13 +87,13 @@ static void show_panels (KhWindow *self, const KhReview *review)
       int n = kh_plan_n_walls (plan);
       text = g_strdup_printf (ngettext ("%d wall", "%d walls", n), n);
     }
-  gtk_label_set_text (GTK_LABEL (self->panels_label), text);
+  kh_readout_set_text (KH_READOUT (self->panels_label), text);
 }
 
 static void show_size (KhWindow *self)
 {
   g_autofree char *size = kh_words_dup_size (kh_session_get_plan (self->session), kh_settings_get_unit ());
-  gtk_label_set_text (GTK_LABEL (self->size_label), size);
+  kh_readout_set_text (KH_READOUT (self->size_label), size);
 }
 
 static void show_verdict (KhWindow *self, const KhReview *review)
@@ -343,6 +344,7 @@ static void kh_window_class_init (KhWindowClass *class)
 
 static void kh_window_init (KhWindow *self)
 {
+  g_type_ensure (KH_TYPE_READOUT); /* named by the template */
   gtk_widget_init_template (GTK_WIDGET (self));
   self->canvas = kh_canvas_new ();
   gtk_overlay_set_child (GTK_OVERLAY (self->canvas_overlay), self->canvas);
