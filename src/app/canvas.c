@@ -24,11 +24,12 @@ static guint signals[N_SIGNALS];
 
 /* ---- view ---- */
 
+/* All of it moves: nothing to compare tiles with. */
 static void forget_layers (KhCanvas *self)
 {
-  kh_layer_spoil (&self->ground);
-  kh_layer_spoil (&self->run);
-  kh_layer_spoil (&self->rulers);
+  kh_layer_clear (&self->ground);
+  kh_layer_clear (&self->run);
+  kh_layer_clear (&self->rulers);
 }
 
 void kh_canvas_drop_layers (KhCanvas *self)
