@@ -19,8 +19,8 @@ enum
 static guint signals[N_SIGNALS];
 
 #define MARGIN 20       /* px round the plan when all of it is shown */
-#define MARGIN_WEST 88  /* px: words of openings */
-#define MARGIN_EAST 140 /* px: words of openings, key of the trail */
+#define MARGIN_WEST 72  /* px: words of openings */
+#define MARGIN_EAST 112 /* px: words of openings, key of the trail */
 
 /* ---- view ---- */
 

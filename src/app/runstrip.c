@@ -14,7 +14,7 @@ static const double speeds[] = { 1, 2, 5, 10, 20, 50 };
 typedef struct
 {
   KhSession *session;
-  GtkWidget *play, *speed, *when, *where, *doing, *area, *hands[2];
+  GtkWidget *play, *speed, *when, *far, *where, *doing, *area, *hands[2];
   gboolean filling;
   /* the run as drawn last, and what it was drawn for */
   cairo_surface_t *drawn;
@@ -104,6 +104,7 @@ static void show_moment (GtkWidget *widget)
   if (!trace)
     {
       kh_readout_set_text (KH_READOUT (strip->when), "");
+      kh_readout_set_text (KH_READOUT (strip->far), "");
       kh_readout_set_text (KH_READOUT (strip->where), "");
       kh_readout_set_text (KH_READOUT (strip->doing), waiting_words (strip));
       return;
@@ -111,7 +112,9 @@ static void show_moment (GtkWidget *widget)
   gsize tick = kh_session_get_played_tick (strip->session);
   g_autofree char *when = kh_run_words_dup_when (trace, tick), *doing = kh_run_words_dup_doing (plan, trace, tick),
                   *free_ways = kh_run_words_dup_free (plan, trace, tick);
-  kh_readout_set_text (KH_READOUT (strip->when), when);
+  g_auto (GStrv) lines = g_strsplit (when, "\n", 2); /* time, then distance */
+  kh_readout_set_text (KH_READOUT (strip->when), lines[0]);
+  kh_readout_set_text (KH_READOUT (strip->far), lines[1]);
   kh_readout_set_text (KH_READOUT (strip->doing), doing);
   kh_readout_set_text (KH_READOUT (strip->where), free_ways);
   g_autofree char *name = g_strdup_printf ("%s. %s. %s", when, doing, free_ways);
@@ -279,12 +282,18 @@ static GtkWidget *controls_new (Strip *strip)
   gtk_accessible_update_property (GTK_ACCESSIBLE (gtk_widget_get_first_child (strip->speed)),
                                   GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Speed of playing"), -1);
   g_signal_connect_swapped (strip->speed, "notify::selected", G_CALLBACK (speed_cb), strip);
-  strip->when = words_new ("kh-heading", 15, 19);
-  strip->doing = words_new ("kh-heading", 10, 40);
-  strip->where = words_new ("kh-second", 10, 40);
+  strip->when = words_new ("kh-heading", 14, 18);
+  strip->far = words_new ("kh-second", 14, 18);
+  GtkWidget *moment = gtk_box_new (GTK_ORIENTATION_VERTICAL, 1);
+  gtk_box_append (GTK_BOX (moment), strip->when);
+  gtk_box_append (GTK_BOX (moment), strip->far);
+  gtk_widget_set_valign (moment, GTK_ALIGN_CENTER);
+  strip->doing = words_new ("kh-heading", 4, 40);
+  strip->where = words_new ("kh-second", 4, 40);
   gtk_box_append (GTK_BOX (texts), strip->doing);
   gtk_box_append (GTK_BOX (texts), strip->where);
   gtk_widget_set_hexpand (texts, TRUE);
+  gtk_widget_set_valign (texts, GTK_ALIGN_CENTER);
   gtk_widget_add_css_class (hands, "kh-switcher");
   gtk_widget_set_valign (hands, GTK_ALIGN_CENTER);
   for (int h = 0; h < 2; h++)
@@ -296,7 +305,7 @@ static GtkWidget *controls_new (Strip *strip)
   gtk_toggle_button_set_group (GTK_TOGGLE_BUTTON (strip->hands[1]), GTK_TOGGLE_BUTTON (strip->hands[0]));
   gtk_box_append (GTK_BOX (box), transport);
   gtk_box_append (GTK_BOX (box), strip->speed);
-  gtk_box_append (GTK_BOX (box), strip->when);
+  gtk_box_append (GTK_BOX (box), moment);
   gtk_box_append (GTK_BOX (box), texts);
   gtk_box_append (GTK_BOX (box), hands);
   return box;
