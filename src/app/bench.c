@@ -105,7 +105,8 @@ static void follow_free (gpointer data, GClosure *closure)
   g_free (follow);
 }
 
-void kh_bench_follow_later (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped, guint delay_ms)
+void kh_bench_follow_later (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped,
+                            guint delay_ms)
 {
   Follow *follow = g_new0 (Follow, 1);
   follow->widget = widget;
@@ -114,7 +115,8 @@ void kh_bench_follow_later (GtkWidget *widget, KhSession *session, const char *s
   GClosure *closure = g_cclosure_new_swap (G_CALLBACK (follow_cb), follow, NULL);
   g_object_watch_closure (G_OBJECT (widget), closure);
   g_signal_connect_closure (session, signal, closure, FALSE);
-  g_signal_connect_data (widget, "map", G_CALLBACK (shown_cb), follow, follow_free, G_CONNECT_SWAPPED | G_CONNECT_AFTER);
+  g_signal_connect_data (widget, "map", G_CALLBACK (shown_cb), follow, follow_free,
+                         G_CONNECT_SWAPPED | G_CONNECT_AFTER);
 }
 
 void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped)
@@ -137,9 +139,15 @@ static const char *find_words (GtkWidget *widget)
   return NULL;
 }
 
+void kh_bench_set_name (GtkWidget *widget, const char *name)
+{
+  gtk_accessible_update_property (GTK_ACCESSIBLE (widget), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
+  g_object_set_data (G_OBJECT (widget), "kh-named", widget);
+}
+
 static void name_widget (GtkWidget *widget, const char *words)
 {
-  if (words && *words)
+  if (words && *words && !g_object_get_data (G_OBJECT (widget), "kh-named"))
     gtk_accessible_update_property (GTK_ACCESSIBLE (widget), GTK_ACCESSIBLE_PROPERTY_LABEL, words, -1);
 }
 
@@ -163,6 +171,7 @@ typedef struct
   gpointer data;
   GDestroyNotify free_data;
   GtkWidget *text, *fault;
+  char *shown; /* as it was put there: what differs was typed */
 } Entry;
 
 static Entry *entry_of (GtkWidget *widget) { return g_object_get_data (G_OBJECT (widget), "kh-entry"); }
@@ -191,6 +200,7 @@ static void entry_free (gpointer data)
   Entry *entry = data;
   if (entry->free_data)
     entry->free_data (entry->data);
+  g_free (entry->shown);
   g_free (entry);
 }
 
@@ -210,9 +220,16 @@ static void show_fault (Entry *entry, const char *fault)
 
 static void show_present (Entry *entry)
 {
-  g_autofree char *now = entry->dup_text (entry->data);
-  gtk_editable_set_text (GTK_EDITABLE (entry->text), now);
+  g_free (entry->shown);
+  entry->shown = entry->dup_text (entry->data);
+  if (strcmp (entry->shown, gtk_editable_get_text (GTK_EDITABLE (entry->text))) != 0)
+    gtk_editable_set_text (GTK_EDITABLE (entry->text), entry->shown);
   show_fault (entry, NULL);
+}
+
+static gboolean is_typed (const Entry *entry)
+{
+  return strcmp (entry->shown, gtk_editable_get_text (GTK_EDITABLE (entry->text))) != 0;
 }
 
 static void try_cb (Entry *entry)
@@ -220,8 +237,9 @@ static void try_cb (Entry *entry)
   g_autofree char *now = entry->dup_text (entry->data);
   g_autofree char *text = g_strstrip (g_strdup (gtk_editable_get_text (GTK_EDITABLE (entry->text))));
   g_autofree char *fault = NULL;
-  if (strcmp (now, text) == 0)
-    show_fault (entry, NULL);
+  /* Nothing typed: what stands there may be older than an undo, and is no wish. */
+  if (!is_typed (entry) || strcmp (now, text) == 0)
+    show_present (entry);
   else if (entry->try_text (entry->data, text, &fault))
     show_present (entry);
   else
@@ -237,6 +255,33 @@ static gboolean key_cb (GtkEventControllerKey *controller, guint keyval, guint c
   return TRUE;
 }
 
+typedef struct
+{
+  void (*take) (GtkWidget *field);
+} Typed;
+
+void kh_bench_set_take_typed (GtkWidget *field, void (*take) (GtkWidget *field))
+{
+  Typed *typed = g_new (Typed, 1);
+  typed->take = take;
+  g_object_set_data_full (G_OBJECT (field), "kh-typed", typed, g_free);
+}
+
+void kh_bench_take_typed (GtkWidget *focus)
+{
+  for (GtkWidget *widget = focus; widget; widget = gtk_widget_get_parent (widget))
+    {
+      const Typed *typed = g_object_get_data (G_OBJECT (widget), "kh-typed");
+      if (typed)
+        {
+          typed->take (widget);
+          return;
+        }
+    }
+}
+
+static void take_typed (GtkWidget *box) { try_cb (entry_of (box)); }
+
 GtkWidget *kh_bench_entry_new (KhTryText try_text, KhDupText dup_text, gpointer data, GDestroyNotify free_data)
 {
   Entry *entry = g_new0 (Entry, 1);
@@ -248,6 +293,7 @@ GtkWidget *kh_bench_entry_new (KhTryText try_text, KhDupText dup_text, gpointer 
   gtk_box_append (GTK_BOX (box), entry->text);
   gtk_box_append (GTK_BOX (box), entry->fault);
   g_object_set_data_full (G_OBJECT (box), "kh-entry", entry, entry_free);
+  kh_bench_set_take_typed (box, take_typed);
   g_signal_connect_swapped (entry->text, "activate", G_CALLBACK (try_cb), entry);
   g_signal_connect_swapped (focus, "leave", G_CALLBACK (try_cb), entry);
   g_signal_connect (keys, "key-pressed", G_CALLBACK (key_cb), entry);
@@ -261,9 +307,18 @@ void kh_bench_entry_refresh (GtkWidget *widget)
 {
   Entry *entry = entry_of (widget);
   GtkWidget *focus = gtk_widget_get_root (widget) ? gtk_root_get_focus (gtk_widget_get_root (widget)) : NULL;
-  gboolean typing = focus && gtk_widget_is_ancestor (focus, entry->text);
+  gboolean typing = focus && gtk_widget_is_ancestor (focus, entry->text) && is_typed (entry);
   if (!typing)
     show_present (entry);
+}
+
+void kh_bench_forget_typed_below (GtkWidget *widget)
+{
+  if (entry_of (widget))
+    show_present (entry_of (widget));
+  else
+    for (GtkWidget *child = gtk_widget_get_first_child (widget); child; child = gtk_widget_get_next_sibling (child))
+      kh_bench_forget_typed_below (child);
 }
 
 void kh_bench_refresh_below (GtkWidget *widget)

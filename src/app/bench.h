@@ -21,8 +21,11 @@ void kh_bench_follow (GtkWidget *widget, KhSession *session, const char *signal,
 void kh_bench_follow_later (GtkWidget *widget, KhSession *session, const char *signal, GCallback callback_swapped, guint delay_ms);
 
 /* GTK 4.8 names a button by its own label only: buttons and folding headings
- * that hold their words deeper are given them as their name, all below 'widget'. */
+ * that hold their words deeper are given them as their name, all below 'widget'
+ * but those named already. */
 void kh_bench_name_below (GtkWidget *widget);
+/* A name of its own, where the words on it do not say what it acts on. */
+void kh_bench_set_name (GtkWidget *widget, const char *name);
 
 /* A number typed with its unit. Tries the text; TRUE: it was taken over. FALSE:
  * *fault (owned) says what is wrong, and nothing was changed. */
@@ -35,3 +38,12 @@ GtkWidget *kh_bench_entry_new (KhTryText try_text, KhDupText dup_text, gpointer 
 void kh_bench_entry_refresh (GtkWidget *entry); /* shows what stands there now, unless it is being typed in */
 /* Refreshes every such entry beneath a widget. */
 void kh_bench_refresh_below (GtkWidget *widget);
+/* The same though something is being typed: before fields are taken away whose
+ * number is no longer where they look for it. */
+void kh_bench_forget_typed_below (GtkWidget *widget);
+
+/* What is typed in the field that has the focus is taken over as Enter would:
+ * before the plan is saved, printed or closed.  'focus' may be NULL. */
+void kh_bench_take_typed (GtkWidget *focus);
+/* Makes a field of another kind one that kh_bench_take_typed knows. */
+void kh_bench_set_take_typed (GtkWidget *field, void (*take) (GtkWidget *field));

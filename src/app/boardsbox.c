@@ -129,8 +129,13 @@ static gboolean put_text (KhBuild *build, const Field *field, const char *text, 
   switch (field->kind)
     {
     case FIELD_NAME:
+      if (g_utf8_strlen (text, -1) > 200)
+        {
+          *fault = g_strdup (_ ("A name has at most 200 characters."));
+          return FALSE;
+        }
       g_free (stock->name);
-      stock->name = g_utf8_substring (text, 0, MIN (200, g_utf8_strlen (text, -1)));
+      stock->name = g_strdup (text);
       return TRUE;
     case FIELD_COUNT:
       if (is_left_open (text, _ ("any")))
@@ -166,6 +171,8 @@ static gboolean try_field (gpointer data, const char *text, char **fault)
 {
   const Field *field = data;
   KhBuild build;
+  if (field->kind <= FIELD_PRICE && field->index >= kh_session_get_plan (field->session)->build.stock->len)
+    return TRUE; /* its board has just gone */
   kh_build_copy (&build, &kh_session_get_plan (field->session)->build);
   gboolean good = put_text (&build, field, text, fault);
   if (good)
@@ -247,15 +254,39 @@ static void add_sheet_cb (Boards *boards)
   edit_stock (boards->session, -1, &sheet, _ ("Sheet added"));
 }
 
+static void form_cb (GtkDropDown *choice, GParamSpec *spec, Boards *boards)
+{
+  KhBuild build;
+  guint index = GPOINTER_TO_UINT (g_object_get_data (G_OBJECT (choice), "kh-index"));
+  kh_build_copy (&build, &kh_session_get_plan (boards->session)->build);
+  if (index < build.stock->len)
+    {
+      KhStock *stock = &g_array_index (build.stock, KhStock, index);
+      stock->form = gtk_drop_down_get_selected (choice) == 0 ? KH_STOCK_STRIP : KH_STOCK_SHEET;
+      stock->width_nm = stock->form == KH_STOCK_STRIP ? 0 : 1220 * KH_NM_PER_MM;
+      kh_session_do_take (boards->session, kh_change_new_build (&build), _ ("Board changed"));
+    }
+  kh_build_clear (&build);
+}
+
+static GtkWidget *form_new (Boards *boards, const KhStock *stock, guint index)
+{
+  const char *const forms[] = { _ ("Strip"), _ ("Sheet, ripped into strips"), NULL };
+  GtkWidget *choice = gtk_drop_down_new_from_strings (forms);
+  gtk_drop_down_set_selected (GTK_DROP_DOWN (choice), stock->form == KH_STOCK_SHEET ? 1 : 0);
+  g_object_set_data (G_OBJECT (choice), "kh-index", GUINT_TO_POINTER (index));
+  g_signal_connect (choice, "notify::selected", G_CALLBACK (form_cb), boards);
+  return choice;
+}
+
 static GtkWidget *board_new (Boards *boards, const KhStock *stock, guint index)
 {
   KhSession *session = boards->session;
   GtkWidget *card = gtk_box_new (GTK_ORIENTATION_VERTICAL, 4),
             *remove = gtk_button_new_with_label (_ ("Remove this board"));
   gtk_widget_add_css_class (card, "kh-card");
-  gtk_box_append (GTK_BOX (card),
-                  kh_bench_note_new (stock->form == KH_STOCK_SHEET ? _ ("Sheet, ripped into strips") : _ ("Strip")));
   gtk_box_append (GTK_BOX (card), kh_bench_row_new (_ ("Name"), field_new (session, FIELD_NAME, index)));
+  gtk_box_append (GTK_BOX (card), kh_bench_row_new (_ ("Form"), form_new (boards, stock, index)));
   gtk_box_append (GTK_BOX (card), kh_bench_row_new (_ ("Length"), field_new (session, FIELD_LENGTH, index)));
   if (stock->form == KH_STOCK_SHEET)
     gtk_box_append (GTK_BOX (card), kh_bench_row_new (_ ("Width"), field_new (session, FIELD_WIDTH, index)));
@@ -285,6 +316,7 @@ static void fill (GtkWidget *widget)
     }
   boards->forms = forms;
   boards->n_shown = stock->len;
+  kh_bench_forget_typed_below (boards->list);
   while ((child = gtk_widget_get_first_child (boards->list)) != NULL)
     gtk_box_remove (GTK_BOX (boards->list), child);
   for (guint i = 0; i < stock->len; i++)
@@ -307,7 +339,8 @@ GtkWidget *kh_boards_box_new (KhSession *session)
   gtk_box_append (GTK_BOX (buttons), sheet);
   gtk_box_append (GTK_BOX (box), boards->list);
   gtk_box_append (GTK_BOX (box), buttons);
-  kh_bench_follow (box, session, "plan-changed", G_CALLBACK (fill));
+  kh_bench_follow_later (box, session, "plan-changed", G_CALLBACK (fill),
+                         1); /* a card is not taken away by its own choice */
   fill (box);
   return box;
 }

@@ -78,6 +78,42 @@ static GtkWidget *badge_new (const KhFinding *finding)
   return area;
 }
 
+/* ---- a card ---- */
+
+/* A card takes the focus before its buttons do, and is told as a whole. */
+#define KH_TYPE_CARD (kh_card_get_type ())
+G_DECLARE_FINAL_TYPE (KhCard, kh_card, KH, CARD, GtkBox)
+
+struct _KhCard
+{
+  GtkBox parent_instance;
+};
+
+G_DEFINE_FINAL_TYPE (KhCard, kh_card, GTK_TYPE_BOX)
+
+static void kh_card_class_init (KhCardClass *class)
+{
+  GtkWidgetClass *plain = g_type_class_ref (GTK_TYPE_WIDGET); /* a box itself passes the focus on */
+  GTK_WIDGET_CLASS (class)->focus = plain->focus;
+  GTK_WIDGET_CLASS (class)->grab_focus = plain->grab_focus;
+  gtk_widget_class_set_accessible_role (GTK_WIDGET_CLASS (class), GTK_ACCESSIBLE_ROLE_GROUP);
+  g_type_class_unref (plain);
+}
+
+static void kh_card_init (KhCard *card)
+{
+  gtk_orientable_set_orientation (GTK_ORIENTABLE (card), GTK_ORIENTATION_VERTICAL);
+  gtk_widget_set_focusable (GTK_WIDGET (card), TRUE);
+  gtk_widget_add_css_class (GTK_WIDGET (card), "kh-card");
+}
+
+/* What a button does, with what it does it to. */
+static void name_button (GtkWidget *button, const char *words, const KhFinding *finding)
+{
+  g_autofree char *name = g_strdup_printf ("%s: %s", words, finding->wrong);
+  kh_bench_set_name (button, name);
+}
+
 /* ---- set aside, bring back ---- */
 
 typedef struct
@@ -159,12 +195,14 @@ static GtkWidget *set_aside_button_new (KhSession *session, const KhFinding *fin
 {
   GtkWidget *button = gtk_menu_button_new ();
   gtk_menu_button_set_label (GTK_MENU_BUTTON (button), _ ("Set aside…"));
+  name_button (button, _ ("Set aside…"), finding);
+  name_button (gtk_widget_get_first_child (button), _ ("Set aside…"), finding); /* this one has the focus */
   gtk_menu_button_set_create_popup_func (GTK_MENU_BUTTON (button), make_reason_popover, place_new (session, finding),
                                          place_destroy);
   return button;
 }
 
-/* ---- cards ---- */
+/* ---- one finding ---- */
 
 static void chosen_cb (GtkEventController *controller, Page *page)
 {
@@ -172,9 +210,19 @@ static void chosen_cb (GtkEventController *controller, Page *page)
   kh_session_set_chosen_finding (page->session, GPOINTER_TO_INT (g_object_get_data (G_OBJECT (card), "kh-index")));
 }
 
-static GtkWidget *show_button_new (int index)
+/* Enter on a card does what its first button does. */
+static gboolean card_key_cb (GtkEventControllerKey *controller, guint keyval, guint code, GdkModifierType state)
+{
+  GtkWidget *card = gtk_event_controller_get_widget (GTK_EVENT_CONTROLLER (controller));
+  if (!gtk_widget_is_focus (card) || (keyval != GDK_KEY_Return && keyval != GDK_KEY_KP_Enter))
+    return FALSE;
+  return gtk_widget_activate (g_object_get_data (G_OBJECT (card), "kh-show"));
+}
+
+static GtkWidget *show_button_new (const KhFinding *finding, int index)
 {
   GtkWidget *show = gtk_button_new_with_label (_ ("Show"));
+  name_button (show, _ ("Show"), finding);
   gtk_actionable_set_action_name (GTK_ACTIONABLE (show), "win.show-finding");
   gtk_actionable_set_action_target (GTK_ACTIONABLE (show), "i", index);
   return show;
@@ -203,10 +251,10 @@ static void number_card (GtkWidget *card, const KhFinding *finding, int index)
 
 static GtkWidget *card_new (Page *page, const KhFinding *finding, int index)
 {
-  GtkWidget *card = gtk_box_new (GTK_ORIENTATION_VERTICAL, 6), *head = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 8);
+  GtkWidget *card = g_object_new (KH_TYPE_CARD, "spacing", 6, NULL),
+            *head = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 8);
   GtkWidget *texts = gtk_box_new (GTK_ORIENTATION_VERTICAL, 3), *buttons = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 6);
-  gtk_widget_add_css_class (card, "kh-card");
-  GtkWidget *badge = badge_new (finding), *show = show_button_new (index);
+  GtkWidget *badge = badge_new (finding), *show = show_button_new (finding, index);
   g_object_set_data (G_OBJECT (card), "kh-badge", badge);
   g_object_set_data (G_OBJECT (card), "kh-show", show);
   g_object_set_data_full (G_OBJECT (card), "kh-key", dup_card_key (finding), g_free);
@@ -224,7 +272,10 @@ static GtkWidget *card_new (Page *page, const KhFinding *finding, int index)
   gtk_box_append (GTK_BOX (card), buttons);
   GtkEventController *focus = gtk_event_controller_focus_new ();
   g_signal_connect (focus, "enter", G_CALLBACK (chosen_cb), page);
+  GtkEventController *keys = gtk_event_controller_key_new ();
+  g_signal_connect (keys, "key-pressed", G_CALLBACK (card_key_cb), NULL);
   gtk_widget_add_controller (card, focus);
+  gtk_widget_add_controller (card, keys);
   number_card (card, finding, index);
   return card;
 }
@@ -232,6 +283,7 @@ static GtkWidget *card_new (Page *page, const KhFinding *finding, int index)
 static GtkWidget *aside_new (Page *page, const KhFinding *finding)
 {
   GtkWidget *card = gtk_box_new (GTK_ORIENTATION_VERTICAL, 3), *back = gtk_button_new_with_label (_ ("Bring back"));
+  name_button (back, _ ("Bring back"), finding);
   gtk_widget_add_css_class (card, "kh-card");
   gtk_widget_set_halign (back, GTK_ALIGN_START);
   gtk_box_append (GTK_BOX (card), kh_bench_words_new (finding->wrong, "kh-running"));
@@ -257,9 +309,7 @@ static char *dup_count (const KhReview *review)
   const int *n = review->n_by_severity;
   g_autoptr (GPtrArray) parts = g_ptr_array_new_with_free_func (g_free);
   if (n[0] > 0)
-    g_ptr_array_add (
-        parts, g_strdup_printf (
-                   ngettext ("%d stops", "%d stop", (gulong)n[0]), n[0]));
+    g_ptr_array_add (parts, g_strdup_printf (ngettext ("%d stops", "%d stop", (gulong)n[0]), n[0]));
   if (n[1] > 0)
     g_ptr_array_add (parts, g_strdup_printf (ngettext ("%d hinders", "%d hinder", (gulong)n[1]), n[1]));
   if (n[2] > 0)
@@ -328,6 +378,17 @@ static void fill_cards (Page *page, const KhReview *review)
     gtk_box_remove (GTK_BOX (page->cards), card);
 }
 
+static void mark_chosen (GtkWidget *widget)
+{
+  Page *page = g_object_get_data (G_OBJECT (widget), "kh-page");
+  int chosen = kh_session_get_chosen_finding (page->session);
+  for (GtkWidget *card = gtk_widget_get_first_child (page->cards); card; card = gtk_widget_get_next_sibling (card))
+    if (GPOINTER_TO_INT (g_object_get_data (G_OBJECT (card), "kh-index")) == chosen)
+      gtk_widget_add_css_class (card, "kh-chosen");
+    else
+      gtk_widget_remove_css_class (card, "kh-chosen");
+}
+
 static void fill (GtkWidget *widget)
 {
   Page *page = g_object_get_data (G_OBJECT (widget), "kh-page");
@@ -351,17 +412,7 @@ static void fill (GtkWidget *widget)
   for (guint i = 0; i < review->sound->len; i++)
     gtk_box_append (GTK_BOX (page->sound), sound_new (g_ptr_array_index (review->sound, i)));
   gtk_widget_set_visible (page->aside_heading, review->n_set_aside > 0);
-}
-
-static void mark_chosen (GtkWidget *widget)
-{
-  Page *page = g_object_get_data (G_OBJECT (widget), "kh-page");
-  int chosen = kh_session_get_chosen_finding (page->session);
-  for (GtkWidget *card = gtk_widget_get_first_child (page->cards); card; card = gtk_widget_get_next_sibling (card))
-    if (GPOINTER_TO_INT (g_object_get_data (G_OBJECT (card), "kh-index")) == chosen)
-      gtk_widget_add_css_class (card, "kh-chosen");
-    else
-      gtk_widget_remove_css_class (card, "kh-chosen");
+  mark_chosen (widget);
 }
 
 static void page_free (gpointer data)

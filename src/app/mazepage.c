@@ -6,10 +6,12 @@
 #include <glib/gi18n-lib.h>
 #include <string.h>
 
+#define MOST_NOTES 20000 /* characters, as in a file */
+
 typedef struct
 {
   KhSession *session;
-  GtkWidget *posts, *measures, *columns, *rows, *anchor, *what, *apply;
+  GtkWidget *posts, *measures, *columns, *rows, *anchor, *what, *apply, *notes_fault;
   gboolean filling;
 } Page;
 
@@ -163,7 +165,11 @@ static void show_measures (GtkWidget *widget)
   Page *page = g_object_get_data (G_OBJECT (widget), "kh-page");
   const KhReview *review = kh_session_get_review (page->session);
   const KhMeasures *m = &review->measures;
+  const KhPlan *plan = kh_session_get_plan (page->session);
   GString *text = g_string_new (NULL);
+  g_autofree char *clear
+      = kh_length_dup_text (plan->lattice.pitch_nm - plan->walls.thickness_nm, kh_settings_get_unit (), TRUE);
+  g_string_append_printf (text, _ ("Clear width %s\n"), clear);
   g_string_append_printf (text, _ ("Dead ends %d, junctions %d\nLongest straight %d cells\n"), m->dead_ends,
                           m->junctions, m->longest_straight);
   if (m->shortest_steps >= 0)
@@ -193,25 +199,41 @@ static void fill (GtkWidget *widget)
   wish_cb (page);
 }
 
-static void notes_left_cb (GtkEventController *controller, Page *page)
+/* Notes that are too long stay as typed, with the fault beneath; the plan keeps its own. */
+static void take_notes (GtkWidget *view)
 {
-  GtkTextBuffer *buffer = gtk_text_view_get_buffer (GTK_TEXT_VIEW (gtk_event_controller_get_widget (controller)));
+  Page *page = g_object_get_data (G_OBJECT (view), "kh-page");
+  GtkTextBuffer *buffer = gtk_text_view_get_buffer (GTK_TEXT_VIEW (view));
   GtkTextIter start, end;
   gtk_text_buffer_get_bounds (buffer, &start, &end);
   g_autofree char *text = gtk_text_buffer_get_text (buffer, &start, &end, FALSE);
   const KhPlan *plan = kh_session_get_plan (page->session);
-  if (g_utf8_strlen (text, -1) > 20000)
-    *g_utf8_offset_to_pointer (text, 20000) = '\0';
-  if (strcmp (text, plan->notes) != 0)
+  long over = g_utf8_strlen (text, -1) - MOST_NOTES;
+  gtk_widget_set_visible (page->notes_fault, over > 0);
+  if (over > 0)
+    {
+      g_autofree char *fault = g_strdup_printf (
+          ngettext ("The notes are %ld character too long and were not taken over. Shorten them.",
+                    "The notes are %ld characters too long and were not taken over. Shorten them.", (gulong)over),
+          over);
+      gtk_label_set_text (GTK_LABEL (page->notes_fault), fault);
+      gtk_accessible_update_property (GTK_ACCESSIBLE (view), GTK_ACCESSIBLE_PROPERTY_DESCRIPTION, fault, -1);
+    }
+  else if (strcmp (text, plan->notes) != 0)
     kh_session_do_take (page->session, kh_change_new_texts (plan->title, text), _ ("Notes changed"));
+}
+
+static void notes_left_cb (GtkEventController *controller)
+{
+  take_notes (gtk_event_controller_get_widget (controller));
 }
 
 static void show_notes (GtkWidget *view)
 {
-  KhSession *session = g_object_get_data (G_OBJECT (view), "kh-session");
+  Page *page = g_object_get_data (G_OBJECT (view), "kh-page");
   GtkTextBuffer *buffer = gtk_text_view_get_buffer (GTK_TEXT_VIEW (view));
-  if (!gtk_widget_has_focus (view))
-    gtk_text_buffer_set_text (buffer, kh_session_get_plan (session)->notes, -1);
+  if (!gtk_widget_has_focus (view) && !gtk_widget_get_visible (page->notes_fault))
+    gtk_text_buffer_set_text (buffer, kh_session_get_plan (page->session)->notes, -1);
 }
 
 static GtkWidget *notes_new (Page *page)
@@ -226,8 +248,12 @@ static GtkWidget *notes_new (Page *page)
   gtk_scrolled_window_set_min_content_height (GTK_SCROLLED_WINDOW (frame), 90);
   gtk_scrolled_window_set_child (GTK_SCROLLED_WINDOW (frame), view);
   gtk_widget_add_css_class (frame, "kh-card");
-  g_object_set_data_full (G_OBJECT (view), "kh-session", g_object_ref (page->session), g_object_unref);
-  g_signal_connect (focus, "leave", G_CALLBACK (notes_left_cb), page);
+  page->notes_fault = kh_bench_note_new ("");
+  gtk_widget_add_css_class (page->notes_fault, "kh-fault");
+  gtk_widget_set_visible (page->notes_fault, FALSE);
+  g_object_set_data (G_OBJECT (view), "kh-page", page);
+  kh_bench_set_take_typed (view, take_notes);
+  g_signal_connect (focus, "leave", G_CALLBACK (notes_left_cb), NULL);
   gtk_widget_add_controller (view, focus);
   kh_bench_follow (view, page->session, "plan-changed", G_CALLBACK (show_notes));
   show_notes (view);
@@ -288,6 +314,7 @@ GtkWidget *kh_maze_page_new (KhSession *session)
   gtk_box_append (GTK_BOX (column), page->measures);
   gtk_box_append (GTK_BOX (column), kh_bench_heading_new (_ ("Notes")));
   gtk_box_append (GTK_BOX (column), notes_new (page));
+  gtk_box_append (GTK_BOX (column), page->notes_fault);
   kh_bench_follow (widget, session, "plan-changed", G_CALLBACK (fill));
   kh_bench_follow (widget, session, "review-changed", G_CALLBACK (show_measures));
   fill (widget);

@@ -51,9 +51,10 @@ static void show_lit (GtkWidget *widget)
     }
   const KhCutRow *row = &g_array_index (list->rows, KhCutRow, lit);
   g_autofree char *length = kh_length_dup_text (row->length_nm, kh_settings_get_unit (), TRUE);
-  g_autofree char *text = g_strdup_printf (ngettext ("%d panel of %s is lit on the plan and on the saw plan.",
-                                                     "%d panels of %s are lit on the plan and on the saw plan.", (gulong) row->count),
-                                           row->count, length);
+  g_autofree char *text
+      = g_strdup_printf (ngettext ("%d panel of %s is lit on the plan and on the saw plan.",
+                                   "%d panels of %s are lit on the plan and on the saw plan.", (gulong)row->count),
+                         row->count, length);
   gtk_label_set_text (GTK_LABEL (page->lit), text);
 }
 

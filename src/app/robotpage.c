@@ -10,7 +10,7 @@
 typedef struct
 {
   KhSession *session;
-  GtkWidget *hand, *shape, *exact, *outcome;
+  GtkWidget *hand, *shape, *exact, *draw, *trim, *outcome;
   gboolean filling; /* the page shows what is so; nobody chose anything */
 } Page;
 
@@ -155,6 +155,42 @@ static void add_range (GtkWidget *column, KhSession *session, gboolean side, int
   gtk_box_append (GTK_BOX (column), row);
 }
 
+/* ---- which errors are drawn ---- */
+
+static char *dup_seed (gpointer data) { return g_strdup_printf ("%" G_GUINT64_FORMAT, kh_session_get_seed (data)); }
+
+static gboolean try_seed (gpointer data, const char *text, char **fault)
+{
+  guint64 seed;
+  if (!g_ascii_string_to_unsigned (text, 10, 0, G_MAXUINT64, &seed, NULL))
+    {
+      *fault = g_strdup_printf (_ ("“%s” is no whole number from 0 on."), text);
+      return FALSE;
+    }
+  kh_session_set_seed (data, seed);
+  return TRUE;
+}
+
+static void draw_others_cb (Page *page)
+{
+  kh_session_set_seed (page->session, kh_session_get_seed (page->session) + 1);
+  kh_bench_refresh_below (page->draw);
+}
+
+/* One run of many that could be: the seed says which. */
+static GtkWidget *draw_new (Page *page)
+{
+  GtkWidget *box = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 6), *others = gtk_button_new_with_label (_ ("Draw others"));
+  GtkWidget *seed = kh_bench_entry_new (try_seed, dup_seed, g_object_ref (page->session), g_object_unref);
+  GtkWidget *row = kh_bench_row_new (_ ("Seed"), seed);
+  gtk_widget_set_hexpand (row, TRUE);
+  gtk_widget_set_valign (others, GTK_ALIGN_START);
+  g_signal_connect_swapped (others, "clicked", G_CALLBACK (draw_others_cb), page);
+  gtk_box_append (GTK_BOX (box), row);
+  gtk_box_append (GTK_BOX (box), others);
+  return box;
+}
+
 /* ---- choices ---- */
 
 static void change_robot (Page *page, void (*edit) (KhRobot *robot, guint value), guint value, const char *words)
@@ -203,8 +239,11 @@ static void shape_cb (Page *page)
 
 static void exact_cb (Page *page)
 {
-  if (!page->filling)
-    kh_session_set_exact (page->session, gtk_drop_down_get_selected (GTK_DROP_DOWN (page->exact)) == 0);
+  if (page->filling)
+    return;
+  gboolean exact = gtk_drop_down_get_selected (GTK_DROP_DOWN (page->exact)) == 0;
+  gtk_widget_set_visible (page->draw, !exact);
+  kh_session_set_exact (page->session, exact);
 }
 
 static void small_cb (Page *page) { change_robot (page, edit_preset, 0, _ ("Small club robot chosen")); }
@@ -233,6 +272,8 @@ static void fill (GtkWidget *widget)
   gtk_drop_down_set_selected (GTK_DROP_DOWN (page->hand), robot->hand == KH_HAND_RIGHT ? 0 : 1);
   gtk_drop_down_set_selected (GTK_DROP_DOWN (page->shape), robot->body.shape == KH_BODY_DISC ? 0 : 1);
   gtk_drop_down_set_selected (GTK_DROP_DOWN (page->exact), kh_session_get_exact (page->session) ? 0 : 1);
+  gtk_widget_set_visible (page->draw, !kh_session_get_exact (page->session));
+  gtk_check_button_set_active (GTK_CHECK_BUTTON (page->trim), robot->control.trim);
   kh_bench_refresh_below (widget);
   page->filling = FALSE;
 }
@@ -293,8 +334,7 @@ static void add_section (GtkWidget *column, Page *page, const char *object, cons
       if (members[i].kind == KH_MEMBER_BOOLEAN)
         {
           GtkWidget *check = gtk_check_button_new_with_label (kh_robot_words_get (&members[i]));
-          gtk_check_button_set_active (GTK_CHECK_BUTTON (check),
-                                       kh_session_get_plan (page->session)->robot.control.trim);
+          page->trim = check; /* the only one: filled with the page */
           g_signal_connect_data (check, "notify::active", G_CALLBACK (trim_cb), page, NULL, G_CONNECT_SWAPPED);
           gtk_box_append (GTK_BOX (box), check);
         }
@@ -326,6 +366,7 @@ GtkWidget *kh_robot_page_new (KhSession *session)
   page->hand = choice_new (hands, page, G_CALLBACK (hand_cb));
   page->shape = choice_new (shapes, page, G_CALLBACK (shape_cb));
   page->exact = choice_new (errors, page, G_CALLBACK (exact_cb));
+  page->draw = draw_new (page);
   page->outcome = kh_bench_note_new ("");
   gtk_label_set_selectable (GTK_LABEL (page->outcome), FALSE);
   g_signal_connect_swapped (small, "clicked", G_CALLBACK (small_cb), page);
@@ -334,6 +375,7 @@ GtkWidget *kh_robot_page_new (KhSession *session)
   gtk_box_append (GTK_BOX (presets), wide);
   gtk_box_append (GTK_BOX (column), kh_bench_row_new (_ ("Keeps on the wall"), page->hand));
   gtk_box_append (GTK_BOX (column), kh_bench_row_new (_ ("Preview"), page->exact));
+  gtk_box_append (GTK_BOX (column), page->draw);
   gtk_box_append (GTK_BOX (column), page->outcome);
   gtk_box_append (GTK_BOX (column), kh_bench_heading_new (_ ("Start from a common robot")));
   gtk_box_append (GTK_BOX (column), presets);

@@ -14,7 +14,7 @@ static const double speeds[] = { 1, 2, 5, 10, 20, 50 };
 typedef struct
 {
   KhSession *session;
-  GtkWidget *play, *speed, *when, *far, *where, *doing, *area, *hands[2];
+  GtkWidget *play, *speed, *when, *way, *where, *doing, *area, *hands[2];
   gboolean filling;
   /* the run as drawn last, and what it was drawn for */
   cairo_surface_t *drawn;
@@ -104,20 +104,22 @@ static void show_moment (GtkWidget *widget)
   if (!trace)
     {
       kh_readout_set_text (KH_READOUT (strip->when), "");
-      kh_readout_set_text (KH_READOUT (strip->far), "");
+      kh_readout_set_text (KH_READOUT (strip->way), "");
       kh_readout_set_text (KH_READOUT (strip->where), "");
       kh_readout_set_text (KH_READOUT (strip->doing), waiting_words (strip));
+      gtk_accessible_update_property (GTK_ACCESSIBLE (strip->area), GTK_ACCESSIBLE_PROPERTY_LABEL,
+                                      waiting_words (strip), -1);
       return;
     }
   gsize tick = kh_session_get_played_tick (strip->session);
-  g_autofree char *when = kh_run_words_dup_when (trace, tick), *doing = kh_run_words_dup_doing (plan, trace, tick),
-                  *free_ways = kh_run_words_dup_free (plan, trace, tick);
-  g_auto (GStrv) lines = g_strsplit (when, "\n", 2); /* time, then distance */
-  kh_readout_set_text (KH_READOUT (strip->when), lines[0]);
-  kh_readout_set_text (KH_READOUT (strip->far), lines[1]);
+  g_autofree char *when = kh_run_words_dup_when (trace, tick), *way = kh_run_words_dup_way (trace, tick),
+                  *doing = kh_run_words_dup_doing (plan, trace, tick),
+                  *free_ways = kh_run_words_dup_free (kh_session_get_strip (strip->session, hand), trace, tick);
+  kh_readout_set_text (KH_READOUT (strip->when), when);
+  kh_readout_set_text (KH_READOUT (strip->way), way);
   kh_readout_set_text (KH_READOUT (strip->doing), doing);
   kh_readout_set_text (KH_READOUT (strip->where), free_ways);
-  g_autofree char *name = g_strdup_printf ("%s. %s. %s", when, doing, free_ways);
+  g_autofree char *name = g_strdup_printf ("%s, %s. %s. %s", when, way, doing, free_ways);
   gtk_accessible_update_property (GTK_ACCESSIBLE (strip->area), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
 }
 
@@ -161,7 +163,7 @@ static void move_to_event (Strip *strip, int step)
   if (!trace)
     return;
   gsize to = step > 0 ? kh_trace_get_n_ticks (trace) - 1 : 0;
-  for (guint i = 0; i < trace->events->len; i++)
+  for (guint i = 1; i < trace->events->len; i++) /* the first is where the run begins, no change */
     {
       gsize at = g_array_index (trace->events, KhEvent, i).tick;
       if (step < 0 && at < now)
@@ -263,7 +265,8 @@ static GtkWidget *controls_new (Strip *strip)
 {
   const char *const times[] = { "1 ×", "2 ×", "5 ×", "10 ×", "20 ×", "50 ×", NULL };
   GtkWidget *box = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 8),
-            *transport = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0);
+            *transport = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0),
+            *moment = gtk_box_new (GTK_ORIENTATION_VERTICAL, 1);
   GtkWidget *texts = gtk_box_new (GTK_ORIENTATION_VERTICAL, 1), *hands = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0);
   strip->play = icon_button_new ("media-playback-start-symbolic", _ ("Play"), G_CALLBACK (play_cb), strip);
   gtk_widget_add_css_class (transport, "linked");
@@ -283,10 +286,9 @@ static GtkWidget *controls_new (Strip *strip)
                                   GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Speed of playing"), -1);
   g_signal_connect_swapped (strip->speed, "notify::selected", G_CALLBACK (speed_cb), strip);
   strip->when = words_new ("kh-heading", 14, 18);
-  strip->far = words_new ("kh-second", 14, 18);
-  GtkWidget *moment = gtk_box_new (GTK_ORIENTATION_VERTICAL, 1);
+  strip->way = words_new ("kh-second", 14, 18);
   gtk_box_append (GTK_BOX (moment), strip->when);
-  gtk_box_append (GTK_BOX (moment), strip->far);
+  gtk_box_append (GTK_BOX (moment), strip->way);
   gtk_widget_set_valign (moment, GTK_ALIGN_CENTER);
   strip->doing = words_new ("kh-heading", 4, 40);
   strip->where = words_new ("kh-second", 4, 40);
@@ -350,7 +352,7 @@ GtkWidget *kh_run_strip_new (KhSession *session)
   gtk_box_append (GTK_BOX (widget), controls);
   gtk_box_append (GTK_BOX (widget), strip->area);
   kh_player_attach (widget, session);
-    kh_bench_follow (widget, session, "player-changed", G_CALLBACK (show_moment));
+  kh_bench_follow (widget, session, "player-changed", G_CALLBACK (show_moment));
   kh_bench_follow_later (widget, session, "review-changed", G_CALLBACK (show_run), 40);
   g_signal_connect_object (gtk_settings_get_default (), "notify::gtk-application-prefer-dark-theme",
                            G_CALLBACK (gtk_widget_queue_draw), strip->area, G_CONNECT_SWAPPED);

@@ -6,9 +6,13 @@
 
 char *kh_run_words_dup_when (const KhTrace *trace, gsize tick)
 {
-  const KhTick *t = kh_trace_get_tick (trace, tick);
-  return g_strdup_printf (_ ("%.1f s of %.1f s\n%.2f m of %.2f m"), (double)tick * trace->tick_s, trace->time_s,
-                          (double)t->distance_mm / 1000, trace->distance_m);
+  return g_strdup_printf (_ ("%.1f s of %.1f s"), (double)tick * trace->tick_s, trace->time_s);
+}
+
+char *kh_run_words_dup_way (const KhTrace *trace, gsize tick)
+{
+  return g_strdup_printf (_ ("%.2f m of %.2f m"), (double)kh_trace_get_tick (trace, tick)->distance_mm / 1000,
+                          trace->distance_m);
 }
 
 static char *dup_cell (const KhPlan *plan, const KhTick *tick)
@@ -19,12 +23,14 @@ static char *dup_cell (const KhPlan *plan, const KhTick *tick)
   return kh_cell_dup_name (cell);
 }
 
-static char *dup_state (KhState state, const char *cell, const char *hand)
+static char *dup_state (KhState state, const char *cell, KhHand which)
 {
+  const char *hand = which == KH_HAND_RIGHT ? _ ("right hand") : _ ("left hand");
   switch (state)
     {
     case KH_STATE_FOLLOW:
-      return g_strdup_printf (_ ("%s: follows the wall at the %s"), cell, hand);
+      return g_strdup_printf (
+          which == KH_HAND_RIGHT ? _ ("%s: follows the right wall") : _ ("%s: follows the left wall"), cell);
     case KH_STATE_LEAD_IN:
       return g_strdup_printf (_ ("%s: has lost the wall at the %s, drives straight on to its end"), cell, hand);
     case KH_STATE_CURVE:
@@ -44,17 +50,41 @@ char *kh_run_words_dup_doing (const KhPlan *plan, const KhTrace *trace, gsize ti
   if (tick + 1 >= kh_trace_get_n_ticks (trace))
     return g_strdup (trace->why);
   g_autofree char *cell = dup_cell (plan, t);
-  return dup_state ((KhState) t->state, cell, trace->hand == KH_HAND_RIGHT ? _ ("right hand") : _ ("left hand"));
+  return dup_state ((KhState)t->state, cell, trace->hand);
 }
 
-char *kh_run_words_dup_free (const KhPlan *plan, const KhTrace *trace, gsize tick)
+static void separate (GString *text)
+{
+  if (text->len > 0)
+    g_string_append (text, ", ");
+}
+
+static void add_side (GString *text, gboolean right, double free_mm)
+{
+  separate (text);
+  if (isfinite (free_mm))
+    g_string_append_printf (text, right ? _ ("right %.0f mm free") : _ ("left %.0f mm free"), free_mm);
+  else
+    g_string_append (text, right ? _ ("right open") : _ ("left open"));
+}
+
+char *kh_run_words_dup_free (const KhStripData *lanes, const KhTrace *trace, gsize tick)
 {
   const KhTick *t = kh_trace_get_tick (trace, tick);
   GString *text = g_string_new (NULL);
-  g_string_append_printf (text, _ ("%.0f mm clear of the nearest wall"), (double)t->clearance_mm);
-  if (isfinite (t->side_front_mm))
-    g_string_append_printf (text, _ (", side reads %.0f mm"), (double)t->side_front_mm);
+  double left, right;
+  if (lanes && kh_strip_data_get_free (lanes, tick, &left, &right))
+    {
+      /* The hand's own side first. */
+      add_side (text, trace->hand == KH_HAND_RIGHT, trace->hand == KH_HAND_RIGHT ? right : left);
+      add_side (text, trace->hand != KH_HAND_RIGHT, trace->hand == KH_HAND_RIGHT ? left : right);
+    }
   if (isfinite (t->front_mm))
-    g_string_append_printf (text, _ (", front %.0f mm"), (double)t->front_mm);
+    {
+      separate (text);
+      g_string_append_printf (text, _ ("front %.0f mm"), (double)t->front_mm);
+    }
+  separate (text);
+  g_string_append_printf (text, _ ("nearest wall %.0f mm"), (double)t->clearance_mm);
   return g_string_free (text, FALSE);
 }

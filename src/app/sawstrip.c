@@ -33,12 +33,13 @@ static void show_plan (GtkWidget *widget)
   KhSawPicture picture = picture_of (strip, 800);
   g_autofree char *cannot = kh_saw_words_dup_cannot (review),
                   *sum = kh_saw_words_dup_sum (review, kh_session_get_plan (strip->session));
-  gtk_label_set_text (GTK_LABEL (strip->sum), cannot ? cannot : *sum ? sum : _ ("Nothing to saw."));
+  const char *words = cannot ? cannot : *sum ? sum : _ ("Nothing to saw.");
+  gtk_label_set_text (GTK_LABEL (strip->sum), words);
   gtk_drawing_area_set_content_height (GTK_DRAWING_AREA (strip->area),
                                        (int)kh_saw_picture_get_height (&picture, review));
   gtk_widget_queue_draw (strip->area);
-  gtk_accessible_update_property (GTK_ACCESSIBLE (strip->area), GTK_ACCESSIBLE_PROPERTY_LABEL, cannot ? cannot : sum,
-                                  -1);
+  g_autofree char *name = g_strdup_printf ("%s. %s", _ ("Saw plan"), words);
+  gtk_accessible_update_property (GTK_ACCESSIBLE (strip->area), GTK_ACCESSIBLE_PROPERTY_LABEL, name, -1);
 }
 
 static void show_lit (GtkWidget *widget)
@@ -109,6 +110,7 @@ GtkWidget *kh_saw_strip_new (KhSession *session)
   gtk_box_append (GTK_BOX (head), strip->sum);
   gtk_box_append (GTK_BOX (widget), head);
   gtk_box_append (GTK_BOX (widget), scrolled);
+  gtk_accessible_update_property (GTK_ACCESSIBLE (strip->area), GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Saw plan"), -1);
   kh_bench_follow (widget, session, "review-changed", G_CALLBACK (show_plan));
   kh_bench_follow (widget, session, "selection-changed", G_CALLBACK (show_lit));
   g_signal_connect_object (gtk_settings_get_default (), "notify::gtk-application-prefer-dark-theme",

@@ -24,8 +24,8 @@ char *kh_saw_words_dup_sum (const KhReview *review, const KhPlan *plan)
     return g_string_free (text, FALSE);
   gboolean priced = has_prices (review->saw_order);
   g_autofree char *cost = dup_money (saw->cost_milli, plan->build.currency);
-  g_autofree char *over = priced ? dup_money (saw->cost_milli - saw->bound_milli, plan->build.currency)
-                                 : g_strdup_printf ("%" G_GINT64_FORMAT, (saw->cost_milli - saw->bound_milli) / 1000);
+  g_autofree char *over = dup_money (saw->cost_milli - saw->bound_milli, plan->build.currency);
+  int n_over = (int)((saw->cost_milli - saw->bound_milli) / 1000); /* without prices each board costs 1 */
   g_string_append_printf (text, ngettext ("%d board", "%d boards", (gulong)saw->n_pieces_of_stock),
                           saw->n_pieces_of_stock);
   if (priced)
@@ -33,9 +33,12 @@ char *kh_saw_words_dup_sum (const KhReview *review, const KhPlan *plan)
   g_string_append (text, ". ");
   if (saw->proven)
     g_string_append (text, _ ("No plan costs less."));
+  else if (priced)
+    g_string_append_printf (text, _ ("At most %s above the least."), over);
   else
     g_string_append_printf (
-        text, priced ? _ ("At most %s above the least.") : _ ("At most %s boards above the fewest."), over);
+        text, ngettext ("At most %d board above the fewest.", "At most %d boards above the fewest.", (gulong)n_over),
+        n_over);
   return g_string_free (text, FALSE);
 }
 

@@ -37,6 +37,8 @@ struct _KhSession
   KhFileStamp stamp;
 
   gboolean preview, exact, playing;
+  gboolean at_end; /* the run before was shown whole: so is the next */
+  guint64 seed;
   KhHand hand;
   double speed;
   gsize played_tick;
@@ -100,6 +102,36 @@ static void work_thread (GTask *task, gpointer source, gpointer data, GCancellab
   g_task_return_pointer (task, result, result_free);
 }
 
+/* The finding that was chosen keeps being it, whatever its number is now. */
+static int find_again (const KhReview *from, int chosen, const KhReview *to)
+{
+  if (chosen < 0 || chosen >= (int)from->findings->len)
+    return -1;
+  const KhFinding *was = g_ptr_array_index (from->findings, chosen);
+  for (guint i = 0; i < to->findings->len; i++)
+    {
+      const KhFinding *finding = g_ptr_array_index (to->findings, i);
+      if (strcmp (finding->code, was->code) == 0 && strcmp (finding->wrong, was->wrong) == 0
+          && finding->at[0] == was->at[0] && finding->at[1] == was->at[1])
+        return (int)i;
+    }
+  return -1;
+}
+
+static void take_review (KhSession *self, KhReview *review)
+{
+  int chosen = self->review ? find_again (self->review, self->chosen_finding, review) : -1;
+  kh_review_free (self->review);
+  self->review = review;
+  self->chosen_finding = chosen;
+}
+
+static gsize last_tick (KhSession *self)
+{
+  const KhTrace *trace = kh_session_get_trace (self);
+  return trace ? kh_trace_get_n_ticks (trace) - 1 : 0;
+}
+
 static void work_done_cb (GObject *source, GAsyncResult *async, gpointer data)
 {
   KhSession *self = KH_SESSION (source);
@@ -109,17 +141,18 @@ static void work_done_cb (GObject *source, GAsyncResult *async, gpointer data)
   if (self->task == task && work->generation == self->generation)
     {
       g_clear_object (&self->task);
-      kh_review_free (self->review);
+      int chosen = self->chosen_finding;
+      take_review (self, g_steal_pointer (&result->review));
       drop_strips (self);
-      self->review = g_steal_pointer (&result->review);
       self->strips[0] = g_steal_pointer (&result->strips[0]);
       self->strips[1] = g_steal_pointer (&result->strips[1]);
-      const KhTrace *trace = kh_session_get_trace (self);
-      gsize last = trace ? kh_trace_get_n_ticks (trace) - 1 : 0;
+      gsize last = last_tick (self);
       /* A fresh run is shown whole; where it was being looked at, the place is kept. */
-      self->played_tick = self->played_tick == 0 || self->played_tick > last ? last : self->played_tick;
+      self->played_tick = self->at_end ? last : MIN (self->played_tick, last);
       g_signal_emit (self, signals[REVIEW_CHANGED], 0);
       g_signal_emit (self, signals[PLAYER_CHANGED], 0);
+      if (self->chosen_finding != chosen)
+        g_signal_emit (self, signals[SELECTION_CHANGED], 0);
     }
   result_free (result);
 }
@@ -138,6 +171,7 @@ static gboolean start_work_cb (gpointer data)
   work->settings.with_run = self->preview;
   work->settings.both_hands = TRUE;
   work->settings.run.exact = self->exact;
+  work->settings.run.seed = self->seed;
   self->task = g_task_new (self, NULL, work_done_cb, NULL);
   g_task_set_task_data (self->task, work, work_free);
   g_task_run_in_thread (self->task, work_thread);
@@ -152,8 +186,9 @@ static void look_again (KhSession *self)
   stop_work (self);
   self->generation++;
   kh_review_settings_init (&settings, plan);
-  kh_review_free (self->review);
-  self->review = kh_review_new (plan, &settings, NULL);
+  if (self->review && kh_session_get_trace (self))
+    self->at_end = self->played_tick >= last_tick (self);
+  take_review (self, kh_review_new (plan, &settings, NULL));
   drop_strips (self);
   self->settle_source = g_timeout_add (SETTLE_MS, start_work_cb, self);
 }
@@ -181,7 +216,8 @@ static void kh_session_class_init (KhSessionClass *klass)
 static void kh_session_init (KhSession *self)
 {
   self->preview = TRUE;
-  self->exact = TRUE;
+  self->exact = self->at_end = TRUE;
+  self->seed = 1;
   self->speed = 5;
   self->lit_row = self->chosen_finding = -1;
 }
@@ -204,7 +240,8 @@ static void announce_plan (KhSession *self, gint64 since_us)
 {
   KhHand hand = kh_session_get_plan (self)->robot.hand;
   self->playing = FALSE;
-  self->lit_row = self->chosen_finding = -1;
+  int lit = self->lit_row, chosen = self->chosen_finding;
+  self->lit_row = -1;
   if (self->hand != hand && !self->review->traces[self->hand])
     self->hand = hand;
   look_again (self);
@@ -213,6 +250,8 @@ static void announce_plan (KhSession *self, gint64 since_us)
   g_signal_emit (self, signals[REVIEW_CHANGED], 0);
   g_signal_emit (self, signals[PLAYER_CHANGED], 0);
   g_signal_emit (self, signals[FILE_CHANGED], 0);
+  if (self->lit_row != lit || self->chosen_finding != chosen)
+    g_signal_emit (self, signals[SELECTION_CHANGED], 0);
 }
 
 gboolean kh_session_do_take (KhSession *self, KhChange *change, const char *words)
@@ -276,15 +315,23 @@ gboolean kh_session_save (KhSession *self, const char *path, gboolean even_if_ch
 
 /* ---- player and preview ---- */
 
+static void run_anew (KhSession *self)
+{
+  int chosen = self->chosen_finding;
+  self->playing = FALSE;
+  look_again (self);
+  g_signal_emit (self, signals[REVIEW_CHANGED], 0);
+  g_signal_emit (self, signals[PLAYER_CHANGED], 0);
+  if (self->chosen_finding != chosen)
+    g_signal_emit (self, signals[SELECTION_CHANGED], 0);
+}
+
 void kh_session_set_preview (KhSession *self, gboolean live)
 {
   if (self->preview == live)
     return;
   self->preview = live;
-  self->playing = FALSE;
-  look_again (self);
-  g_signal_emit (self, signals[REVIEW_CHANGED], 0);
-  g_signal_emit (self, signals[PLAYER_CHANGED], 0);
+  run_anew (self);
 }
 
 gboolean kh_session_get_preview (KhSession *self) { return self->preview; }
@@ -294,21 +341,24 @@ void kh_session_set_exact (KhSession *self, gboolean exact)
   if (self->exact == exact)
     return;
   self->exact = exact;
-  self->playing = FALSE;
-  look_again (self);
-  g_signal_emit (self, signals[REVIEW_CHANGED], 0);
-  g_signal_emit (self, signals[PLAYER_CHANGED], 0);
+  run_anew (self);
 }
 
 gboolean kh_session_get_exact (KhSession *self) { return self->exact; }
 
-const KhTrace *kh_session_get_trace (KhSession *self) { return self->review ? self->review->traces[self->hand] : NULL; }
-
-static gsize last_tick (KhSession *self)
+void kh_session_set_seed (KhSession *self, guint64 seed)
 {
-  const KhTrace *trace = kh_session_get_trace (self);
-  return trace ? kh_trace_get_n_ticks (trace) - 1 : 0;
+  if (self->seed == seed)
+    return;
+  self->seed = seed;
+  if (self->exact)
+    return; /* nothing is drawn */
+  run_anew (self);
 }
+
+guint64 kh_session_get_seed (KhSession *self) { return self->seed; }
+
+const KhTrace *kh_session_get_trace (KhSession *self) { return self->review ? self->review->traces[self->hand] : NULL; }
 
 void kh_session_set_hand (KhSession *self, KhHand hand)
 {
@@ -325,8 +375,8 @@ KhHand kh_session_get_hand (KhSession *self) { return self->hand; }
 void kh_session_set_played_tick (KhSession *self, gsize tick)
 {
   tick = MIN (tick, last_tick (self));
-  if (self->played_tick == tick)
-    return;
+  if (self->played_tick == tick || !kh_session_get_trace (self))
+    return; /* without a run the place is kept for the next */
   self->played_tick = tick;
   g_signal_emit (self, signals[PLAYER_CHANGED], 0);
 }

@@ -45,6 +45,8 @@ void kh_session_set_hand (KhSession *self, KhHand hand); /* the one shown; the p
 KhHand kh_session_get_hand (KhSession *self);
 void kh_session_set_exact (KhSession *self, gboolean exact);
 gboolean kh_session_get_exact (KhSession *self);
+void kh_session_set_seed (KhSession *self, guint64 seed); /* which errors are drawn; 1 at first */
+guint64 kh_session_get_seed (KhSession *self);
 void kh_session_set_played_tick (KhSession *self, gsize tick);
 gsize kh_session_get_played_tick (KhSession *self);
 void kh_session_set_playing (KhSession *self, gboolean playing); /* at the end: from the start again */

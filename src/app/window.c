@@ -181,6 +181,7 @@ GtkWidget *kh_window_get_canvas (KhWindow *self) { return self->canvas; }
 
 gboolean kh_window_is_untouched (KhWindow *self)
 {
+  kh_window_take_typed (self);
   KhHistory *history = kh_session_get_history (self->session);
   return kh_session_get_path (self->session) == NULL && kh_history_get_undo_words (history) == NULL
          && kh_history_get_redo_words (history) == NULL;
@@ -214,6 +215,7 @@ static void info_response_cb (GtkInfoBar *bar, int response, KhWindow *self)
 
 void kh_window_save_recovery (KhWindow *self)
 {
+  kh_window_take_typed (self);
   if (self->recovery != NULL)
     kh_recovery_save_now (self->recovery);
 }
@@ -260,6 +262,8 @@ void kh_window_tell (GtkWindow *parent, const char *heading, const char *detail)
 static gboolean close_request (GtkWindow *window)
 {
   KhWindow *self = KH_WINDOW (window);
+  if (!self->closing)
+    kh_window_take_typed (self);
   if (!self->closing && !kh_session_is_saved (self->session))
     {
       kh_window_ask_close (self);

@@ -232,6 +232,8 @@ void kh_window_open_place_menu (KhWindow *self, double x, double y)
 
 /* ---- regions ---- */
 
+void kh_window_take_typed (KhWindow *self) { kh_bench_take_typed (gtk_window_get_focus (GTK_WINDOW (self))); }
+
 void kh_window_go_round (KhWindow *self, int step)
 {
   GtkWidget *regions[] = { self->header, self->tool_box, self->canvas, self->strip_stack, self->bench_box };

@@ -193,6 +193,7 @@ static void export_plan_path_cb (KhWindow *self, const char *path, gpointer data
 
 void kh_window_ask_export_plan (KhWindow *self)
 {
+  kh_window_take_typed (self);
   GtkFileChooserNative *chooser = new_save_chooser (self, _ ("Export Plan as PDF, SVG or PNG"), ".pdf");
   static const char *const endings[] = { "pdf", "svg", "png" };
   const char *const names[] = { _ ("PDF, to scale on a page"), _ ("SVG, true size"), _ ("PNG, a picture") };
@@ -224,6 +225,7 @@ static void export_cut_list_path_cb (KhWindow *self, const char *path, gpointer 
 
 void kh_window_ask_export_cut_list (KhWindow *self)
 {
+  kh_window_take_typed (self);
   GtkFileChooserNative *chooser = new_save_chooser (self, _ ("Export Cut List"), ".csv");
   g_autoptr (GtkFileFilter) filter = gtk_file_filter_new ();
   gtk_file_filter_set_name (filter, _ ("Table (CSV)"));
@@ -276,6 +278,7 @@ static void printed_cb (GtkPrintOperation *operation, GtkPrintOperationResult re
 
 void kh_window_print (KhWindow *self)
 {
+  kh_window_take_typed (self);
   const KhPlan *plan = kh_session_get_plan (self->session);
   g_autoptr (GtkPrintOperation) operation = gtk_print_operation_new ();
   g_autoptr (GtkPageSetup) setup = gtk_page_setup_new ();

@@ -236,6 +236,7 @@ static void save_to (Saving *saving, const char *path_borrowed, gboolean even_if
 
 void kh_window_save_then (KhWindow *self, KhThen then, gpointer data)
 {
+  kh_window_take_typed (self);
   const char *path = kh_session_get_path (self->session);
   if (path == NULL)
     kh_window_ask_save_as (self, then, data);
@@ -258,6 +259,7 @@ void kh_window_ask_save_as (KhWindow *self, KhThen then, gpointer data)
 {
   GtkFileChooserNative *chooser
       = gtk_file_chooser_native_new (_ ("Save Plan"), GTK_WINDOW (self), GTK_FILE_CHOOSER_ACTION_SAVE, NULL, NULL);
+  kh_window_take_typed (self);
   g_autofree char *name = kh_window_dup_file_name (self);
   add_plan_filters (GTK_FILE_CHOOSER (chooser));
   set_folder_of (GTK_FILE_CHOOSER (chooser), kh_session_get_path (self->session));

@@ -40,6 +40,7 @@ void kh_window_fill_bench (KhWindow *self); /* pages and strips for a new sessio
 void kh_window_show_bench (KhWindow *self, const char *page);
 void kh_window_open_place_menu (KhWindow *self, double x, double y);
 void kh_window_go_round (KhWindow *self, int step);
+void kh_window_take_typed (KhWindow *self); /* what is typed on the bench and not yet taken over */
 
 /* windowfiles.c */
 typedef void (*KhThen) (KhWindow *self, gpointer data);

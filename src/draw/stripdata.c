@@ -24,6 +24,7 @@ static void take_samples (KhStripData *data, const KhTrace *trace, const KhSolid
     {
       const KhTick *tick = kh_trace_get_tick (trace, i);
       data->distance_of_tick[i] = tick->distance_mm;
+      data->turning[i] = tick->state == KH_STATE_PIVOT;
       gboolean changed = tick->state != last_state;
       if (changed && tick->state == KH_STATE_PIVOT)
         g_array_append_val (data->turns, tick->distance_mm);
@@ -52,6 +53,7 @@ KhStripData *kh_strip_data_new (const KhPlan *plan, const KhTrace *trace)
   data->turns = g_array_new (FALSE, FALSE, sizeof (float));
   data->n_ticks = kh_trace_get_n_ticks (trace);
   data->distance_of_tick = g_new (float, data->n_ticks);
+  data->turning = g_new (guint8, data->n_ticks);
   data->length = MAX (trace->distance_m * 1000, 1);
   data->half_width = body->shape == KH_BODY_DISC ? body->radius_mm : body->half_width_mm;
   data->middle = derived.wall_distance;
@@ -65,6 +67,25 @@ KhStripData *kh_strip_data_new (const KhPlan *plan, const KhTrace *trace)
   return data;
 }
 
+gboolean kh_strip_data_get_free (const KhStripData *data, gsize tick, double *left_mm, double *right_mm)
+{
+  guint low = 0, high = data->samples->len;
+  if (tick >= data->n_ticks || data->turning[tick] || high == 0)
+    return FALSE;
+  while (high - low > 1) /* the last sample at or before the tick */
+    {
+      guint middle = low + (high - low) / 2;
+      if (g_array_index (data->samples, KhStripSample, middle).tick <= tick)
+        low = middle;
+      else
+        high = middle;
+    }
+  const KhStripSample *sample = &g_array_index (data->samples, KhStripSample, low);
+  *left_mm = (double)sample->left - data->half_width;
+  *right_mm = (double)sample->right - data->half_width;
+  return TRUE;
+}
+
 void kh_strip_data_free (KhStripData *data)
 {
   if (!data)
@@ -72,5 +93,6 @@ void kh_strip_data_free (KhStripData *data)
   g_array_unref (data->samples);
   g_array_unref (data->turns);
   g_free (data->distance_of_tick);
+  g_free (data->turning);
   g_free (data);
 }

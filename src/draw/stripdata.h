@@ -26,4 +26,5 @@ struct KhStripData
   gboolean failed;   /* did not arrive */
   gsize n_ticks;
   float *distance_of_tick;
+  guint8 *turning;   /* by tick */
 };

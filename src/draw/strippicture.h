@@ -10,6 +10,9 @@
 typedef struct KhStripData KhStripData; /* free widths and lanes worked out once a run, at any thread */
 KhStripData *kh_strip_data_new (const KhPlan *plan, const KhTrace *trace);
 void kh_strip_data_free (KhStripData *data);
+/* From the body to the walls beside it at a tick, mm; NAN: open on that side.
+ * FALSE while it turns in place: the sides are not looked at then. */
+gboolean kh_strip_data_get_free (const KhStripData *data, gsize tick, double *left_mm, double *right_mm);
 
 typedef struct { KhScheme scheme; double width, height, text_size; gsize played_tick; } KhStripPicture;
 void kh_strip_picture_draw (const KhStripPicture *picture, cairo_t *cr, const KhStripData *data);

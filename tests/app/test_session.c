@@ -27,10 +27,7 @@ static void wait_for (KhSession *session)
   assert_false (kh_session_is_working (session));
 }
 
-static void count_cb (KhSession *session, int *n)
-{
-  (*n)++;
-}
+static void count_cb (KhSession *session, int *n) { (*n)++; }
 
 static gboolean edit_wall (KhSession *session, KhEdge edge, gboolean walled)
 {
@@ -67,7 +64,8 @@ static void older_results_are_dropped (void **state)
   for (int i = 0; i < 15; i++)
     {
       gint64 until = g_get_monotonic_time () + 15000 * (i % 5); /* some have begun, some have not */
-      edit_wall (session, (KhEdge){ KH_AXIS_X, i, 8 }, !kh_plan_has_wall (kh_session_get_plan (session), (KhEdge){ KH_AXIS_X, i, 8 }));
+      edit_wall (session, (KhEdge){ KH_AXIS_X, i, 8 },
+                 !kh_plan_has_wall (kh_session_get_plan (session), (KhEdge){ KH_AXIS_X, i, 8 }));
       while (g_get_monotonic_time () < until)
         g_main_context_iteration (NULL, FALSE);
     }
@@ -83,7 +81,8 @@ static void older_results_are_dropped (void **state)
 static void saved_is_what_is_in_the_file (void **state)
 {
   g_autoptr (KhSession) session = session_new ("first-maze");
-  g_autofree char *folder = g_dir_make_tmp ("kerfhand-session-XXXXXX", NULL), *path = g_build_filename (folder, "a.mazeplan", NULL);
+  g_autofree char *folder = g_dir_make_tmp ("kerfhand-session-XXXXXX", NULL),
+                  *path = g_build_filename (folder, "a.mazeplan", NULL);
   g_autoptr (GError) error = NULL;
   KhEdge edge = { KH_AXIS_X, 2, 2 };
   assert_false (kh_session_is_saved (session));
@@ -138,6 +137,78 @@ static void the_player_stays_within_the_run (void **state)
   assert_false (kh_session_get_playing (session));
 }
 
+/* A run shown whole is shown whole again, however long the next one is; a place looked at is kept. */
+static void the_played_place_survives_an_edit (void **state)
+{
+  g_autoptr (KhSession) session = session_new ("first-maze");
+  wait_for (session);
+  gsize before = kh_trace_get_n_ticks (kh_session_get_trace (session));
+  KhMark mark = g_array_index (kh_session_get_plan (session)->marks, KhMark, 0);
+  /* Without its marks the run goes on past where it ended. */
+  assert_true (kh_session_do_take (session, kh_change_new_marks (NULL, 0), "no mark"));
+  wait_for (session);
+  gsize after = kh_trace_get_n_ticks (kh_session_get_trace (session));
+  assert_true (after > before);
+  assert_int_equal (kh_session_get_played_tick (session), after - 1);
+  kh_session_set_played_tick (session, 0);
+  assert_true (kh_session_do_take (session, kh_change_new_marks (&mark, 1), "mark"));
+  kh_session_set_played_tick (session, 40); /* no run yet: nothing to move in */
+  wait_for (session);
+  assert_int_equal (kh_session_get_played_tick (session), 0);
+}
+
+static const KhFinding *chosen_of (KhSession *session)
+{
+  int chosen = kh_session_get_chosen_finding (session);
+  return chosen < 0 ? NULL : g_ptr_array_index (kh_session_get_review (session)->findings, chosen);
+}
+
+/* The run's findings come in between later: the one that was chosen stays chosen, under its new number. */
+static void the_chosen_finding_keeps_being_it (void **state)
+{
+  g_autoptr (KhSession) session = session_new ("island");
+  int n_selections = 0, last;
+  wait_for (session);
+  assert_true (edit_wall (session, (KhEdge){ KH_AXIS_X, 3, 0 }, FALSE));
+  last = (int)kh_session_get_review (session)->findings->len - 1;
+  kh_session_set_chosen_finding (session, last);
+  g_autofree char *wrong = g_strdup (chosen_of (session)->wrong);
+  g_signal_connect (session, "selection-changed", G_CALLBACK (count_cb), &n_selections);
+  wait_for (session);
+  assert_int_not_equal (kh_session_get_chosen_finding (session), last);
+  assert_string_equal (chosen_of (session)->wrong, wrong);
+  assert_int_equal (n_selections, 1);
+  /* Gone with the edit that mends it. */
+  for (guint i = 0; i < kh_session_get_review (session)->findings->len; i++)
+    if (strcmp (((KhFinding *)g_ptr_array_index (kh_session_get_review (session)->findings, i))->code, "leak") == 0)
+      kh_session_set_chosen_finding (session, (int)i);
+  assert_string_equal (chosen_of (session)->code, "leak");
+  kh_session_undo (session);
+  assert_null (chosen_of (session));
+}
+
+/* Another seed, another run; the same seed, the same bits. */
+static void the_seed_says_which_errors_are_drawn (void **state)
+{
+  g_autoptr (KhSession) session = session_new ("first-maze");
+  guint64 hashes[3];
+  wait_for (session);
+  guint64 exact = kh_trace_hash (kh_session_get_trace (session));
+  kh_session_set_seed (session, 7);
+  assert_false (kh_session_is_working (session)); /* nothing is drawn: nothing to do */
+  kh_session_set_exact (session, FALSE);
+  for (int i = 0; i < 3; i++)
+    {
+      kh_session_set_seed (session, i == 1 ? 8 : 7);
+      wait_for (session);
+      assert_int_equal (kh_session_get_trace (session)->seed, i == 1 ? 8 : 7);
+      hashes[i] = kh_trace_hash (kh_session_get_trace (session));
+    }
+  assert_true (hashes[0] == hashes[2]);
+  assert_true (hashes[0] != hashes[1]);
+  assert_true (hashes[0] != exact);
+}
+
 /* Thrown away while work is under way: nothing is touched afterwards (seen by the sanitizers). */
 static void a_session_can_go_at_any_time (void **state)
 {
@@ -157,9 +228,15 @@ static void a_session_can_go_at_any_time (void **state)
 int main (void)
 {
   const struct CMUnitTest tests[] = {
-    cmocka_unit_test (findings_follow_at_once_and_the_run_later), cmocka_unit_test (older_results_are_dropped),
-    cmocka_unit_test (saved_is_what_is_in_the_file),              cmocka_unit_test (nothing_is_no_step),
-    cmocka_unit_test (the_player_stays_within_the_run),           cmocka_unit_test (a_session_can_go_at_any_time),
+    cmocka_unit_test (findings_follow_at_once_and_the_run_later),
+    cmocka_unit_test (older_results_are_dropped),
+    cmocka_unit_test (saved_is_what_is_in_the_file),
+    cmocka_unit_test (nothing_is_no_step),
+    cmocka_unit_test (the_played_place_survives_an_edit),
+    cmocka_unit_test (the_chosen_finding_keeps_being_it),
+    cmocka_unit_test (the_seed_says_which_errors_are_drawn),
+    cmocka_unit_test (the_player_stays_within_the_run),
+    cmocka_unit_test (a_session_can_go_at_any_time),
   };
   return cmocka_run_group_tests (tests, NULL, NULL);
 }
