@@ -86,12 +86,16 @@ static void type_in (GtkWidget *entry, const char *text)
 {
   gtk_widget_grab_focus (entry);
   kt_settle (60);
-  kt_keys ("ctrl+a");
+  GString *keys = g_string_new ("key --delay 5 ctrl+a"); /* one call for all: a process a key is slow */
   for (const char *c = text; *c; c++)
-    {
-      char key[] = { *c, '\0' };
-      kt_keys (*c == ' ' ? "space" : *c == '-' ? "minus" : *c == '/' ? "slash" : key);
-    }
+    if (*c == ' ')
+      g_string_append (keys, " space");
+    else if (*c == '-' || *c == '/')
+      g_string_append (keys, *c == '-' ? " minus" : " slash");
+    else
+      g_string_append_printf (keys, " %c", *c);
+  kt_x (keys->str);
+  g_string_free (keys, TRUE);
 }
 
 static const char *text_of (GtkWidget *entry) { return gtk_editable_get_text (GTK_EDITABLE (entry)); }
