@@ -124,7 +124,7 @@ static void written_cb (GObject *source, GAsyncResult *result, gpointer data)
       if (self->let_go)
         remove_files (self);
     }
-  else if (kh_session_is_saved (self->session))
+  else if (!kh_session_is_at_stake (self->session))
     remove_files (self);
   else if (self->again)
     schedule (self);
@@ -136,7 +136,7 @@ static gboolean write_cb (gpointer data)
 {
   KhRecovery *self = data;
   self->source = 0;
-  if (kh_session_is_saved (self->session) || !open_note (self))
+  if (!kh_session_is_at_stake (self->session) || !open_note (self))
     return G_SOURCE_REMOVE;
   write_note (self);
   Writing *writing = g_new0 (Writing, 1);
@@ -161,7 +161,7 @@ static void schedule (KhRecovery *self)
 
 static void changed_cb (KhRecovery *self)
 {
-  if (!kh_session_is_saved (self->session))
+  if (kh_session_is_at_stake (self->session))
     schedule (self);
   else if (!self->writing)
     {
@@ -184,7 +184,7 @@ KhRecovery *kh_recovery_new (KhSession *session)
 
 void kh_recovery_save_now (KhRecovery *self)
 {
-  if (kh_session_is_saved (self->session) || !open_note (self))
+  if (!kh_session_is_at_stake (self->session) || !open_note (self))
     return;
   g_clear_handle_id (&self->source, g_source_remove);
   write_note (self);

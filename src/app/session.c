@@ -292,6 +292,13 @@ const char *kh_session_get_path (KhSession *self) { return self->path; }
 
 gboolean kh_session_is_saved (KhSession *self) { return self->saved_state == kh_history_get_state (self->history); }
 
+gboolean kh_session_is_at_stake (KhSession *self)
+{
+  if (self->saved_state == G_MAXUINT64)
+    return kh_history_get_state (self->history) != 0;
+  return !kh_session_is_saved (self);
+}
+
 void kh_session_set_file (KhSession *self, const char *path)
 {
   char *copy = g_strdup (path);

@@ -35,6 +35,8 @@ KhStripData *kh_session_get_strip (KhSession *self, KhHand hand); /* NULL: no ru
 /* File */
 const char *kh_session_get_path (KhSession *self); /* NULL: never saved */
 gboolean kh_session_is_saved (KhSession *self);
+/* Something would be lost: it differs from its file or, never saved, from what it began with. */
+gboolean kh_session_is_at_stake (KhSession *self);
 void kh_session_set_file (KhSession *self, const char *path); /* opened from, or saved to: state is saved; stamps the file */
 gboolean kh_session_save (KhSession *self, const char *path, gboolean even_if_changed, GError **error);
 

@@ -17,7 +17,7 @@ static void show_title (KhWindow *self)
   const KhPlan *plan = kh_session_get_plan (self->session);
   g_autofree char *name = kh_window_dup_file_name (self);
   const char *title = *plan->title != '\0' ? plan->title : _ ("Plan without a title");
-  gboolean saved = kh_session_is_saved (self->session);
+  gboolean saved = !kh_session_is_at_stake (self->session);
   gboolean has_file = kh_session_get_path (self->session) != NULL;
   g_autofree char *file = NULL;
   if (!saved)
@@ -59,17 +59,24 @@ static gboolean end_notice_cb (gpointer data)
   KhWindow *self = data;
   self->notice_source = 0;
   gtk_widget_remove_css_class (self->pointed_label, "kh-notice");
+  gtk_widget_remove_css_class (self->pointed_label, "kh-care-words");
   show_pointed (self);
   return G_SOURCE_REMOVE;
 }
 
-static void notice_cb (KhCanvas *canvas, const char *text, KhWindow *self)
+void kh_window_say (KhWindow *self, const char *text, gboolean is_care)
 {
   g_clear_handle_id (&self->notice_source, g_source_remove);
+  if (is_care)
+    gtk_widget_add_css_class (self->pointed_label, "kh-care-words");
+  else
+    gtk_widget_remove_css_class (self->pointed_label, "kh-care-words");
   kh_readout_set_text (KH_READOUT (self->pointed_label), text);
   gtk_widget_add_css_class (self->pointed_label, "kh-notice");
   self->notice_source = g_timeout_add_seconds (6, end_notice_cb, self);
 }
+
+static void notice_cb (KhCanvas *canvas, const char *text, KhWindow *self) { kh_window_say (self, text, TRUE); }
 
 static void show_panels (KhWindow *self, const KhReview *review)
 {
@@ -264,7 +271,7 @@ static gboolean close_request (GtkWindow *window)
   KhWindow *self = KH_WINDOW (window);
   if (!self->closing)
     kh_window_take_typed (self);
-  if (!self->closing && !kh_session_is_saved (self->session))
+  if (!self->closing && kh_session_is_at_stake (self->session))
     {
       kh_window_ask_close (self);
       return TRUE;

@@ -7,7 +7,7 @@
 #include <glib/gi18n-lib.h>
 
 /* Choosing where to write, and what is written besides the plan's own file:
- * pictures of the plan, the cut list as a table, the plan on paper. */
+ * pictures of the plan, the cut list as a table. */
 
 /* ---- a path, with its ending, not overwritten without asking ---- */
 
@@ -162,7 +162,7 @@ static void say_written (KhWindow *self, const char *path)
 {
   g_autofree char *name = g_filename_display_name (path);
   g_autofree char *text = g_strdup_printf (_ ("Written: %s"), name);
-  g_signal_emit_by_name (self->canvas, "notice", text);
+  kh_window_say (self, text, FALSE);
 }
 
 static void drawn_cb (GObject *source, GAsyncResult *result, gpointer data)
@@ -232,65 +232,4 @@ void kh_window_ask_export_cut_list (KhWindow *self)
   gtk_file_filter_add_suffix (filter, "csv");
   gtk_file_chooser_add_filter (GTK_FILE_CHOOSER (chooser), filter);
   kh_window_choose_path (self, chooser, ".csv", export_cut_list_path_cb, NULL);
-}
-
-/* ---- paper ---- */
-
-static void draw_page_cb (GtkPrintOperation *operation, GtkPrintContext *context, int page, KhWindow *self)
-{
-  const KhPlan *plan = kh_session_get_plan (self->session);
-  cairo_t *cr = gtk_print_context_get_cairo_context (context);
-  double width = gtk_print_context_get_width (context), height = gtk_print_context_get_height (context);
-  PangoLayout *layout = gtk_print_context_create_pango_layout (context);
-  PangoFontDescription *font = pango_font_description_from_string ("Sans Semi-Bold");
-  KhPlanPicture picture;
-  KhView view;
-  const double heading = 24;
-
-  pango_font_description_set_absolute_size (font, 14 * PANGO_SCALE);
-  pango_layout_set_font_description (layout, font);
-  pango_layout_set_text (layout, plan->title, -1);
-  pango_layout_set_width (layout, (int)(width * PANGO_SCALE));
-  pango_layout_set_ellipsize (layout, PANGO_ELLIPSIZE_END);
-  cairo_set_source_rgb (cr, 0, 0, 0);
-  cairo_move_to (cr, 0, 0);
-  pango_cairo_show_layout (cr, layout);
-
-  kh_plan_picture_init (&picture);
-  picture.scheme = KH_SCHEME_PRINT;
-  picture.with_rulers = picture.with_lattice = picture.with_findings = TRUE;
-  picture.text_size = 8;
-  kh_view_fit (&view, plan, width, height - heading, 40);
-  cairo_translate (cr, 0, heading);
-  kh_plan_picture_draw (&picture, cr, &view, plan, kh_session_get_review (self->session));
-  pango_font_description_free (font);
-  g_object_unref (layout);
-}
-
-static void printed_cb (GtkPrintOperation *operation, GtkPrintOperationResult result, KhWindow *self)
-{
-  g_autoptr (GError) error = NULL;
-  if (result != GTK_PRINT_OPERATION_RESULT_ERROR)
-    return;
-  gtk_print_operation_get_error (operation, &error);
-  kh_window_tell (GTK_WINDOW (self), _ ("The plan could not be printed."), error != NULL ? error->message : NULL);
-}
-
-void kh_window_print (KhWindow *self)
-{
-  kh_window_take_typed (self);
-  const KhPlan *plan = kh_session_get_plan (self->session);
-  g_autoptr (GtkPrintOperation) operation = gtk_print_operation_new ();
-  g_autoptr (GtkPageSetup) setup = gtk_page_setup_new ();
-  g_autofree char *name = kh_window_dup_file_name (self);
-  if (plan->lattice.columns > plan->lattice.rows)
-    gtk_page_setup_set_orientation (setup, GTK_PAGE_ORIENTATION_LANDSCAPE);
-  gtk_print_operation_set_default_page_setup (operation, setup);
-  gtk_print_operation_set_n_pages (operation, 1);
-  gtk_print_operation_set_unit (operation, GTK_UNIT_POINTS);
-  gtk_print_operation_set_job_name (operation, name);
-  gtk_print_operation_set_allow_async (operation, TRUE);
-  g_signal_connect_object (operation, "draw-page", G_CALLBACK (draw_page_cb), self, 0);
-  g_signal_connect_object (operation, "done", G_CALLBACK (printed_cb), self, 0);
-  gtk_print_operation_run (operation, GTK_PRINT_OPERATION_ACTION_PRINT_DIALOG, GTK_WINDOW (self), NULL);
 }

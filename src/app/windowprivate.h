@@ -28,6 +28,9 @@ struct _KhWindow
   GtkWidget *status_bar, *pointed_label, *size_label, *panels_label, *verdict_image, *verdict_label;
 };
 
+/* window.c */
+void kh_window_say (KhWindow *self, const char *text, gboolean is_care); /* for some seconds in the status bar */
+
 /* windowactions.c */
 void kh_window_init_actions (KhWindow *self);
 void kh_window_sync_actions (KhWindow *self); /* enabled, states */
@@ -53,10 +56,12 @@ void kh_window_ask_close (KhWindow *self);
 void kh_window_fill_recent (KhWindow *self);
 char *kh_window_dup_file_name (KhWindow *self); /* "boat-house.mazeplan", or what it could be called */
 
+/* windowprint.c */
+void kh_window_print (KhWindow *self);
+
 /* windowexport.c */
 void kh_window_ask_export_plan (KhWindow *self);
 void kh_window_ask_export_cut_list (KhWindow *self);
-void kh_window_print (KhWindow *self);
 /* Puts the ending on the name, and asks before overwriting where the chooser could not. */
 typedef void (*KhWithPath) (KhWindow *self, const char *path, gpointer data);
 void kh_window_choose_path (KhWindow *self, GtkFileChooserNative *chooser, const char *ending, KhWithPath with_path,
