@@ -130,7 +130,9 @@ GtkWidget *kh_panels_page_new (KhSession *session)
   page->sum = kh_bench_note_new ("");
   page->buy = kh_bench_note_new ("");
   g_signal_connect_swapped (page->ends, "notify::selected", G_CALLBACK (ends_cb), page);
-  gtk_expander_set_child (GTK_EXPANDER (boards), kh_boards_box_new (session));
+  GtkWidget *boards_box = kh_boards_box_new (session);
+  gtk_widget_set_margin_top (boards_box, 6);
+  gtk_expander_set_child (GTK_EXPANDER (boards), boards_box);
   gtk_box_append (GTK_BOX (column), kh_bench_row_new (_ ("Joint"), page->ends));
   gtk_box_append (GTK_BOX (column), kh_saw_box_new (session));
   gtk_box_append (GTK_BOX (column), boards);
