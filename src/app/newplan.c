@@ -141,8 +141,10 @@ static void entry_changed_cb (GtkEditable *entry, Dialog *dialog)
     }
   mark (dialog, CLEAR, NULL);
   check_all (dialog);
-  if (GTK_WIDGET (entry) != dialog->entries[CLEAR] && dialog->good[PITCH] && dialog->good[THICKNESS])
-    set_entry (dialog, CLEAR, dialog->values_nm[PITCH] - dialog->values_nm[THICKNESS]);
+  if (GTK_WIDGET (entry) != dialog->entries[CLEAR] && has_thickness &&
+      kh_length_parse (gtk_editable_get_text (GTK_EDITABLE (dialog->entries[PITCH])), dialog->unit, &length, NULL) &&
+      length > thickness)
+    set_entry (dialog, CLEAR, length - thickness);
   show_sentence (dialog);
 }
 
