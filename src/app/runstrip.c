@@ -9,13 +9,18 @@
 #include <glib/gi18n-lib.h>
 #include <math.h>
 
+#define LEAST_LANES 92 /* pixels; with less the lanes run into one another */
+
 static const double speeds[] = { 1, 2, 5, 10, 20, 50 };
 
 typedef struct
 {
   KhSession *session;
   GtkWidget *play, *speed, *when, *way, *where, *doing, *area, *hands[2];
-  gboolean filling;
+  GtkWidget *controls, *moment, *texts,
+      *below; /* the words stand among the controls, or below them where it is narrow */
+  guint arrange_source;
+  gboolean filling, narrow;
   /* the run as drawn last, and what it was drawn for */
   cairo_surface_t *drawn;
   KhStripData *drawn_lanes;
@@ -261,13 +266,75 @@ static GtkWidget *words_new (const char *css, int least_chars, int natural_chars
   return words;
 }
 
+/* Less than this across, and the words would be cut off among the controls. */
+#define NARROW 720
+
+static gboolean arrange_cb (gpointer data)
+{
+  Strip *strip = data;
+  strip->arrange_source = 0;
+  strip->narrow = gtk_widget_get_width (strip->area) < NARROW;
+  g_object_ref (strip->texts);
+  gtk_box_remove (GTK_BOX (gtk_widget_get_parent (strip->texts)), strip->texts);
+  if (strip->narrow)
+    gtk_box_append (GTK_BOX (strip->below), strip->texts);
+  else
+    gtk_box_insert_child_after (GTK_BOX (strip->controls), strip->texts, strip->moment);
+  g_object_unref (strip->texts);
+  gtk_orientable_set_orientation (GTK_ORIENTABLE (strip->texts),
+                                  strip->narrow ? GTK_ORIENTATION_HORIZONTAL : GTK_ORIENTATION_VERTICAL);
+  gtk_box_set_spacing (GTK_BOX (strip->texts), strip->narrow ? 10 : 1);
+  gtk_widget_set_hexpand (strip->moment, strip->narrow);
+  gtk_widget_set_visible (strip->below, strip->narrow);
+  return G_SOURCE_REMOVE;
+}
+
+static void resize_cb (GtkDrawingArea *area, int width, int height, Strip *strip)
+{
+  /* Not now: the sizes are being given out. */
+  if (width > 0 && (width < NARROW) != strip->narrow && strip->arrange_source == 0)
+    strip->arrange_source = g_idle_add (arrange_cb, strip);
+}
+
+static GtkWidget *hands_new (Strip *strip)
+{
+  GtkWidget *hands = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0);
+  gtk_widget_add_css_class (hands, "kh-switcher");
+  gtk_widget_set_valign (hands, GTK_ALIGN_CENTER);
+  for (int h = 0; h < 2; h++)
+    {
+      strip->hands[h] = gtk_toggle_button_new_with_label (h == KH_HAND_RIGHT ? _ ("Right hand") : _ ("Left hand"));
+      g_signal_connect (strip->hands[h], "toggled", G_CALLBACK (hand_cb), strip);
+      gtk_box_append (GTK_BOX (hands), strip->hands[h]);
+    }
+  gtk_toggle_button_set_group (GTK_TOGGLE_BUTTON (strip->hands[1]), GTK_TOGGLE_BUTTON (strip->hands[0]));
+  return hands;
+}
+
+/* When and how far, and what it does there. */
+static void add_words (Strip *strip)
+{
+  strip->moment = gtk_box_new (GTK_ORIENTATION_VERTICAL, 1);
+  strip->texts = gtk_box_new (GTK_ORIENTATION_VERTICAL, 1);
+  strip->when = words_new ("kh-heading", 14, 18);
+  strip->way = words_new ("kh-second", 14, 18);
+  strip->doing = words_new ("kh-heading", 4, 40);
+  strip->where = words_new ("kh-second", 4, 40);
+  gtk_box_append (GTK_BOX (strip->moment), strip->when);
+  gtk_box_append (GTK_BOX (strip->moment), strip->way);
+  gtk_widget_set_valign (strip->moment, GTK_ALIGN_CENTER);
+  gtk_box_append (GTK_BOX (strip->texts), strip->doing);
+  gtk_box_append (GTK_BOX (strip->texts), strip->where);
+  gtk_widget_set_hexpand (strip->where, TRUE);
+  gtk_widget_set_hexpand (strip->texts, TRUE);
+  gtk_widget_set_valign (strip->texts, GTK_ALIGN_CENTER);
+}
+
 static GtkWidget *controls_new (Strip *strip)
 {
   const char *const times[] = { "1 ×", "2 ×", "5 ×", "10 ×", "20 ×", "50 ×", NULL };
   GtkWidget *box = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 8),
-            *transport = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0),
-            *moment = gtk_box_new (GTK_ORIENTATION_VERTICAL, 1);
-  GtkWidget *texts = gtk_box_new (GTK_ORIENTATION_VERTICAL, 1), *hands = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0);
+            *transport = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0);
   strip->play = icon_button_new ("media-playback-start-symbolic", _ ("Play"), G_CALLBACK (play_cb), strip);
   gtk_widget_add_css_class (transport, "linked");
   gtk_box_append (GTK_BOX (transport),
@@ -285,31 +352,12 @@ static GtkWidget *controls_new (Strip *strip)
   gtk_accessible_update_property (GTK_ACCESSIBLE (gtk_widget_get_first_child (strip->speed)),
                                   GTK_ACCESSIBLE_PROPERTY_LABEL, _ ("Speed of playing"), -1);
   g_signal_connect_swapped (strip->speed, "notify::selected", G_CALLBACK (speed_cb), strip);
-  strip->when = words_new ("kh-heading", 14, 18);
-  strip->way = words_new ("kh-second", 14, 18);
-  gtk_box_append (GTK_BOX (moment), strip->when);
-  gtk_box_append (GTK_BOX (moment), strip->way);
-  gtk_widget_set_valign (moment, GTK_ALIGN_CENTER);
-  strip->doing = words_new ("kh-heading", 4, 40);
-  strip->where = words_new ("kh-second", 4, 40);
-  gtk_box_append (GTK_BOX (texts), strip->doing);
-  gtk_box_append (GTK_BOX (texts), strip->where);
-  gtk_widget_set_hexpand (texts, TRUE);
-  gtk_widget_set_valign (texts, GTK_ALIGN_CENTER);
-  gtk_widget_add_css_class (hands, "kh-switcher");
-  gtk_widget_set_valign (hands, GTK_ALIGN_CENTER);
-  for (int h = 0; h < 2; h++)
-    {
-      strip->hands[h] = gtk_toggle_button_new_with_label (h == KH_HAND_RIGHT ? _ ("Right hand") : _ ("Left hand"));
-      g_signal_connect (strip->hands[h], "toggled", G_CALLBACK (hand_cb), strip);
-      gtk_box_append (GTK_BOX (hands), strip->hands[h]);
-    }
-  gtk_toggle_button_set_group (GTK_TOGGLE_BUTTON (strip->hands[1]), GTK_TOGGLE_BUTTON (strip->hands[0]));
+  add_words (strip);
   gtk_box_append (GTK_BOX (box), transport);
   gtk_box_append (GTK_BOX (box), strip->speed);
-  gtk_box_append (GTK_BOX (box), moment);
-  gtk_box_append (GTK_BOX (box), texts);
-  gtk_box_append (GTK_BOX (box), hands);
+  gtk_box_append (GTK_BOX (box), strip->moment);
+  gtk_box_append (GTK_BOX (box), strip->texts);
+  gtk_box_append (GTK_BOX (box), hands_new (strip));
   return box;
 }
 
@@ -317,6 +365,7 @@ static void strip_free (gpointer data)
 {
   Strip *strip = data;
   g_object_unref (strip->session);
+  g_clear_handle_id (&strip->arrange_source, g_source_remove);
   g_clear_pointer (&strip->drawn, cairo_surface_destroy);
   g_free (strip);
 }
@@ -336,11 +385,16 @@ GtkWidget *kh_run_strip_new (KhSession *session)
   strip->session = g_object_ref (session);
   g_object_set_data_full (G_OBJECT (widget), "kh-strip", strip, strip_free);
   gtk_widget_add_css_class (widget, "kh-strip");
-  GtkWidget *controls = controls_new (strip);
-  gtk_widget_set_margin_start (controls, 12);
-  gtk_widget_set_margin_end (controls, 12);
-  gtk_widget_set_margin_top (controls, 6);
+  strip->controls = controls_new (strip);
+  strip->below = gtk_box_new (GTK_ORIENTATION_HORIZONTAL, 0);
+  gtk_widget_set_margin_start (strip->controls, 12);
+  gtk_widget_set_margin_end (strip->controls, 12);
+  gtk_widget_set_margin_top (strip->controls, 6);
+  gtk_widget_set_margin_start (strip->below, 12);
+  gtk_widget_set_margin_end (strip->below, 12);
+  gtk_widget_set_visible (strip->below, FALSE);
   strip->area = gtk_drawing_area_new ();
+  gtk_drawing_area_set_content_height (GTK_DRAWING_AREA (strip->area), LEAST_LANES);
   gtk_widget_set_vexpand (strip->area, TRUE);
   gtk_widget_set_focusable (strip->area, TRUE);
   gtk_drawing_area_set_draw_func (GTK_DRAWING_AREA (strip->area), draw_cb, strip, NULL);
@@ -349,7 +403,9 @@ GtkWidget *kh_run_strip_new (KhSession *session)
   g_signal_connect (keys, "key-pressed", G_CALLBACK (key_cb), strip);
   gtk_widget_add_controller (strip->area, GTK_EVENT_CONTROLLER (drag));
   gtk_widget_add_controller (strip->area, keys);
-  gtk_box_append (GTK_BOX (widget), controls);
+  g_signal_connect (strip->area, "resize", G_CALLBACK (resize_cb), strip);
+  gtk_box_append (GTK_BOX (widget), strip->controls);
+  gtk_box_append (GTK_BOX (widget), strip->below);
   gtk_box_append (GTK_BOX (widget), strip->area);
   kh_player_attach (widget, session);
   kh_bench_follow (widget, session, "player-changed", G_CALLBACK (show_moment));

@@ -59,13 +59,17 @@ static void separate (GString *text)
     g_string_append (text, ", ");
 }
 
+/* The hand's own side comes first and says what the numbers are. */
 static void add_side (GString *text, gboolean right, double free_mm)
 {
+  gboolean first = text->len == 0;
   separate (text);
-  if (isfinite (free_mm))
+  if (!isfinite (free_mm))
+    g_string_append (text, right ? _ ("right open") : _ ("left open"));
+  else if (first)
     g_string_append_printf (text, right ? _ ("right %.0f mm free") : _ ("left %.0f mm free"), free_mm);
   else
-    g_string_append (text, right ? _ ("right open") : _ ("left open"));
+    g_string_append_printf (text, right ? _ ("right %.0f mm") : _ ("left %.0f mm"), free_mm);
 }
 
 char *kh_run_words_dup_free (const KhStripData *lanes, const KhTrace *trace, gsize tick)
@@ -75,7 +79,6 @@ char *kh_run_words_dup_free (const KhStripData *lanes, const KhTrace *trace, gsi
   double left, right;
   if (lanes && kh_strip_data_get_free (lanes, tick, &left, &right))
     {
-      /* The hand's own side first. */
       add_side (text, trace->hand == KH_HAND_RIGHT, trace->hand == KH_HAND_RIGHT ? right : left);
       add_side (text, trace->hand != KH_HAND_RIGHT, trace->hand == KH_HAND_RIGHT ? left : right);
     }
@@ -85,6 +88,6 @@ char *kh_run_words_dup_free (const KhStripData *lanes, const KhTrace *trace, gsi
       g_string_append_printf (text, _ ("front %.0f mm"), (double)t->front_mm);
     }
   separate (text);
-  g_string_append_printf (text, _ ("nearest wall %.0f mm"), (double)t->clearance_mm);
+  g_string_append_printf (text, _ ("nearest %.0f mm"), (double)t->clearance_mm);
   return g_string_free (text, FALSE);
 }

@@ -113,6 +113,37 @@ static void the_strip_stays_in_its_place (void **state)
   kh_strip_data_free (data);
 }
 
+/* Between two walls the free widths and the body fill the way: right + left + width = clear width, over the cosine of
+ * the heading's angle to the walls (plane geometry). The nearest wall is never farther than the nearer side. */
+static void free_widths_fill_the_way (void **state)
+{
+  g_autoptr (KhPlan) plan = load ("boat-house");
+  g_autoptr (KhReview) review = look_at (plan);
+  const KhTrace *trace = review->traces[KH_HAND_RIGHT];
+  KhStripData *data = kh_strip_data_new (plan, trace);
+  double clear = kh_mm_from_nm (plan->lattice.pitch_nm - plan->walls.thickness_nm), left, right;
+  int n_between = 0, n_open = 0, n_turning = 0;
+  for (gsize i = 0; i < kh_trace_get_n_ticks (trace); i++)
+    {
+      const KhTick *tick = kh_trace_get_tick (trace, i);
+      gboolean turning = tick->state == KH_STATE_PIVOT;
+      assert_int_equal (kh_strip_data_get_free (data, i, &left, &right), !turning);
+      n_turning += turning;
+      if (turning || tick->state != KH_STATE_FOLLOW)
+        continue;
+      double off = remainder (tick->heading_rad, G_PI / 2);
+      n_open += !isfinite (left);
+      if (!isfinite (left) || !isfinite (right) || fabs (off) > 0.1 || left + right > clear)
+        continue;
+      n_between++;
+      assert_true (fabs (left + right + 2 * plan->robot.body.radius_mm - clear / cos (off)) < 1);
+      assert_true ((double)tick->clearance_mm < MIN (left, right) + 3);
+    }
+  assert_true (n_between > 100 && n_open > 0 && n_turning > 0);
+  assert_false (kh_strip_data_get_free (data, kh_trace_get_n_ticks (trace), &left, &right));
+  kh_strip_data_free (data);
+}
+
 /* Every piece of the saw plan is found where it is drawn. */
 static void the_saw_plan_answers_clicks (void **state)
 {
@@ -160,7 +191,8 @@ int main (int argc, char **argv)
   folder = argv[1];
   const struct CMUnitTest tests[] = {
     cmocka_unit_test (every_meaning_stands_out),      cmocka_unit_test (a_view_goes_there_and_back),
-    cmocka_unit_test (the_strip_stays_in_its_place),  cmocka_unit_test (the_saw_plan_answers_clicks),
+    cmocka_unit_test (the_strip_stays_in_its_place),  cmocka_unit_test (free_widths_fill_the_way),
+    cmocka_unit_test (the_saw_plan_answers_clicks),
     cmocka_unit_test (every_example_is_drawn_in_every_way),
   };
   return cmocka_run_group_tests (tests, NULL, NULL);
