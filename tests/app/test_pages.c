@@ -358,8 +358,11 @@ static void test_boards (void **state)
   /* its form: a sheet gets a width */
   GtkWidget *form = find_type (gtk_widget_get_parent (find_label (window (), "Form")), GTK_TYPE_DROP_DOWN);
   KhStockForm was = g_array_index (plan_of ()->build.stock, KhStock, 0).form;
-  gtk_drop_down_set_selected (GTK_DROP_DOWN (form), was == KH_STOCK_SHEET ? 0 : 1);
-  kt_settle (150);
+  gtk_widget_grab_focus (form);
+  kt_keys ("space");
+  kt_settle (250);
+  kt_keys (was == KH_STOCK_SHEET ? "Up Return" : "Down Return"); /* the list that is open goes with its card */
+  kt_settle (250);
   assert_int_not_equal (g_array_index (plan_of ()->build.stock, KhStock, 0).form, was);
   assert_int_equal (n_steps (), 1);
   kt_picture ("boards");
