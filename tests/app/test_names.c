@@ -80,7 +80,7 @@ int main (int argc, char **argv)
       return 1;
     }
   atspi_init ();
-  for (int i = 0; i < 100 && !program; i++)
+  for (int i = 0; i < 600 && !program; i++)
     {
       g_usleep (100000);
       program = find_program ();
