@@ -20,7 +20,7 @@ static guint signals[N_SIGNALS];
 
 #define MARGIN 20       /* px round the plan when all of it is shown */
 #define MARGIN_WEST 72  /* px: words of openings */
-#define MARGIN_EAST 112 /* px: words of openings, key of the trail */
+#define MARGIN_EAST 124 /* px: words of openings, key of the trail */
 
 /* ---- view ---- */
 

@@ -42,6 +42,9 @@ static void motion_cb (GtkEventControllerMotion *motion, double x, double y, KhC
 {
   if (self->session == NULL)
     return;
+  /* the toolkit tells the place again after each layout: no movement */
+  if (self->pointer_in && x == self->pointer_x + KH_RULER_LEFT && y == self->pointer_y + KH_RULER_TOP)
+    return;
   point_at (self, x, y);
   describe_pointer (self);
   gtk_widget_queue_draw (GTK_WIDGET (self));

@@ -366,6 +366,8 @@ static void kh_window_init (KhWindow *self)
   kh_window_init_bench (self);
   kh_window_init_actions (self);
   kh_window_fill_recent (self);
+  g_signal_connect_object (gtk_recent_manager_get_default (), "changed", G_CALLBACK (kh_window_fill_recent), self,
+                           G_CONNECT_SWAPPED);
 
   GtkDropTarget *drop = gtk_drop_target_new (GDK_TYPE_FILE_LIST, GDK_ACTION_COPY);
   g_signal_connect (drop, "drop", G_CALLBACK (drop_cb), self);
