@@ -244,13 +244,102 @@ static void test_play (void **state)
   assert_int_equal (kh_session_get_played_tick (session_of ()), from);
 }
 
+static KhVec seen_at (double x_mm, double y_mm)
+{
+  KhVec at;
+  kh_canvas_locate (KH_CANVAS (kh_window_get_canvas (kt_window (app))), (KhVec){ x_mm, y_mm }, &at.x, &at.y);
+  return at;
+}
+
+/* The wheel zooms about the pointer; middle drag and space-drag move the paper; a key shows all again. */
+static void test_view (void **state)
+{
+  double p = pitch_mm ();
+  kt_keys ("ctrl+0");
+  KhVec pointed = seen_at (2 * p, 2 * p), far = seen_at (0, 0);
+  kt_point (kt_window (app), 2 * p, 2 * p);
+  kt_x ("click 4");
+  kt_x ("click 4");
+  KhVec pointed_after = seen_at (2 * p, 2 * p), far_after = seen_at (0, 0);
+  assert_true (ABS (pointed_after.x - pointed.x) < 2 && ABS (pointed_after.y - pointed.y) < 2);
+  double grown = (pointed_after.x - far_after.x) / (pointed.x - far.x);
+  assert_true (grown > 1.3 && grown < 1.6); /* twice 1.2, snapped to whole pixels of wall */
+
+  int walls = kh_plan_n_walls (plan_of ());
+  KhVec before = seen_at (2 * p, 2 * p);
+  kt_drag (kt_window (app), 2 * p, 2 * p, 2.5 * p, 2 * p, 2);
+  assert_true (seen_at (2 * p, 2 * p).x > before.x + 20);
+  before = seen_at (2 * p, 2 * p);
+  kt_x ("keydown space");
+  kt_drag (kt_window (app), 2 * p, 2 * p, 2 * p, 2.5 * p, 1);
+  kt_x ("keyup space");
+  assert_true (seen_at (2 * p, 2 * p).y < before.y - 20);
+  assert_int_equal (kh_plan_n_walls (plan_of ()), walls);
+  kt_keys ("ctrl+0");
+  assert_true (ABS (seen_at (0, 0).x - far.x) < 1);
+}
+
+static GtkWidget *open_menu (void)
+{
+  for (GtkWidget *child = gtk_widget_get_first_child (gtk_widget_get_parent (kh_window_get_canvas (kt_window (app))));
+       child != NULL; child = gtk_widget_get_next_sibling (child))
+    if (GTK_IS_POPOVER_MENU (child) && gtk_widget_get_mapped (child))
+      return child;
+  return NULL;
+}
+
+/* A secondary click, and the Menu key: what is there can be done from the menu, as one step. */
+static void test_menu_of_a_place (void **state)
+{
+  double p = pitch_mm ();
+  guint marks = plan_of ()->marks->len;
+  int walls = kh_plan_n_walls (plan_of ());
+  kt_click (kt_window (app), 1.5 * p, 1.5 * p, 3);
+  kt_settle (300);
+  kt_picture ("menu");
+  assert_non_null (open_menu ());
+  g_action_group_activate_action (G_ACTION_GROUP (kt_window (app)), "place-mark", g_variant_new_boolean (TRUE));
+  assert_int_equal (plan_of ()->marks->len, marks + 1);
+  assert_int_equal (kh_plan_n_walls (plan_of ()), walls);
+  kt_keys ("Escape");
+  kt_settle (300);
+  assert_null (open_menu ());
+  kt_keys ("ctrl+z");
+  assert_int_equal (plan_of ()->marks->len, marks);
+  kh_canvas_grab_cursor (KH_CANVAS (kh_window_get_canvas (kt_window (app))));
+  kt_keys ("shift+F10");
+  kt_settle (300);
+  assert_non_null (open_menu ());
+  kt_keys ("Escape");
+  kt_settle (300);
+}
+
+/* F6 goes round: header, tools, canvas, strip, bench, and comes back. */
+static void test_regions (void **state)
+{
+  GtkWindow *window = GTK_WINDOW (kt_window (app));
+  GtkWidget *canvas = kh_window_get_canvas (kt_window (app));
+  kh_canvas_grab_cursor (KH_CANVAS (canvas));
+  g_autoptr (GHashTable) stops = g_hash_table_new (NULL, NULL);
+  for (int i = 0; i < 5; i++)
+    {
+      kt_keys ("F6");
+      GtkWidget *focus = gtk_window_get_focus (window);
+      assert_non_null (focus);
+      g_hash_table_add (stops, focus);
+    }
+  assert_int_equal (g_hash_table_size (stops), 5);
+  assert_true (gtk_widget_is_ancestor (gtk_window_get_focus (window), canvas));
+}
+
 int main (void)
 {
   const struct CMUnitTest tests[] = {
     cmocka_unit_test (test_walls),          cmocka_unit_test (test_escape),
     cmocka_unit_test (test_mark_and_start), cmocka_unit_test (test_leak_is_found),
     cmocka_unit_test (test_keyboard),       cmocka_unit_test (test_save_and_open_again),
-    cmocka_unit_test (test_play),
+    cmocka_unit_test (test_view),           cmocka_unit_test (test_menu_of_a_place),
+    cmocka_unit_test (test_regions),        cmocka_unit_test (test_play),
   };
   return cmocka_run_group_tests (tests, start_app, stop_app);
 }
